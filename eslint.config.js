@@ -28,7 +28,7 @@ export default defineConfig(
       ],
       'check-file/filename-blocklist': [
         'error',
-        { '**/{utils,helpers,common,misc,manager,index}.{ts,tsx}': 'a file named after what it exports' },
+        { '**/{utils,helpers,common,misc,manager,index}.{ts,tsx}': '*.by-its-export.*' },
       ],
     },
   },

@@ -25,7 +25,6 @@ export const lineSchema = (max: number) =>
     .string()
     .trim()
     .max(max, `At most ${max} characters.`)
-    // eslint-disable-next-line no-control-regex
     .regex(/^[^\u0000-\u001f\u007f]*$/, 'Line breaks and control characters are not allowed here.');
 
 export const requiredLineSchema = (max: number, what: string) => lineSchema(max).min(1, `Enter ${what}.`);
