@@ -54,15 +54,30 @@ try {
     spawnSync('chown', ['postgres', folder]);
   }
   const data = join(folder, 'data');
-  asPostgres('initdb', ['-D', data, '-U', 'fringeward', '-A', 'trust', '-E', 'UTF8', '--locale=C', '--no-sync']);
+  asPostgres('initdb', [
+    '-D',
+    data,
+    '-U',
+    'fringeward',
+    '-A',
+    'trust',
+    '-E',
+    'UTF8',
+    '--locale=C',
+    '--no-sync',
+  ]);
   const options = `-p ${port} -c listen_addresses=127.0.0.1 -c unix_socket_directories=${folder} -c fsync=off`;
   asPostgres('pg_ctl', ['-D', data, '-w', '-l', join(folder, 'log'), '-o', options, 'start']);
   try {
     status =
-      spawnSync('node_modules/.bin/vitest', ['run', 'tests/server', 'tests/promises', ...process.argv.slice(2)], {
-        stdio: 'inherit',
-        env: { ...process.env, DATABASE_URL: `postgres://fringeward@127.0.0.1:${port}/postgres` },
-      }).status ?? 1;
+      spawnSync(
+        'node_modules/.bin/vitest',
+        ['run', 'tests/server', 'tests/promises', ...process.argv.slice(2)],
+        {
+          stdio: 'inherit',
+          env: { ...process.env, DATABASE_URL: `postgres://fringeward@127.0.0.1:${port}/postgres` },
+        },
+      ).status ?? 1;
   } finally {
     asPostgres('pg_ctl', ['-D', data, '-m', 'immediate', 'stop']);
   }
