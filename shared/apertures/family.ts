@@ -40,13 +40,7 @@ export interface FarFieldModel {
    * Writes the normalised intensity (1 on the axis) at `n` spatial frequencies (u[i], v[i]) into `out`.
    * Allocates nothing. Throws nothing; a frequency of zero is allowed.
    */
-  intensity(
-    values: ArrayLike<number>,
-    u: Float64Array,
-    v: Float64Array,
-    out: Float64Array,
-    n: number,
-  ): void;
+  intensity(values: ArrayLike<number>, u: Float64Array, v: Float64Array, out: Float64Array, n: number): void;
   /** Family values from fitted values, and fitted values from family values (nuisances get a stated start). */
   toFamily(values: ArrayLike<number>): ApertureValues;
   fromFamily(values: ApertureValues): number[];

@@ -22,6 +22,8 @@ export function spatialFrequency(geometry: Geometry, dx: number, dy: number): { 
   const X = dx * geometry.pixelPitch;
   const Y = -dy * geometry.pixelPitch;
   const reach =
-    geometry.kind === 'lens' ? geometry.distance : Math.sqrt(X * X + Y * Y + geometry.distance * geometry.distance);
+    geometry.kind === 'lens'
+      ? geometry.distance
+      : Math.sqrt(X * X + Y * Y + geometry.distance * geometry.distance);
   return { fx: X / (geometry.wavelength * reach), fy: Y / (geometry.wavelength * reach) };
 }
