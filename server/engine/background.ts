@@ -21,7 +21,8 @@ export function backgroundPlane(data: Float32Array, mask: Uint8Array, width: num
       const stride = Math.max(1, Math.floor(Math.sqrt(((right - left) * (bottom - top)) / 900)));
       const values: number[] = [];
       for (let y = top; y < bottom; y += stride)
-        for (let x = left; x < right; x += stride) if (mask[y * width + x] === 0) values.push(data[y * width + x]);
+        for (let x = left; x < right; x += stride)
+          if (mask[y * width + x] === 0) values.push(data[y * width + x]);
       if (values.length > 8)
         points.push({
           x: (left + right - 1) / 2 - x0,
@@ -30,7 +31,14 @@ export function backgroundPlane(data: Float32Array, mask: Uint8Array, width: num
         });
     }
   if (points.length < 6) return { x0, y0, offset: 0, slopeX: 0, slopeY: 0 };
-  let plane = [quantileInPlace(Float64Array.from(points, (p) => p.z), 0.25), 0, 0];
+  let plane = [
+    quantileInPlace(
+      Float64Array.from(points, (p) => p.z),
+      0.25,
+    ),
+    0,
+    0,
+  ];
   for (let round = 0; round < 12; round++) {
     const residuals = points.map((p) => p.z - plane[0] - plane[1] * p.x - plane[2] * p.y);
     const scale = Math.max(1e-9, 1.4826 * quantileInPlace(Float64Array.from(residuals, Math.abs), 0.4));

@@ -62,7 +62,9 @@ function compressMap(
   for (let k = 0; k < used * angles; k++) {
     if (cells.count[k] < 1 || cells.count[k] < 0.5 * cells.all[k]) continue;
     const mean = cells.sum[k] / cells.count[k];
-    const sigma = Math.sqrt(varianceAt(frame.noise, mean) / cells.count[k] + (0.25 * 0.25 * frame.noise.a) / 4);
+    const sigma = Math.sqrt(
+      varianceAt(frame.noise, mean) / cells.count[k] + (0.25 * 0.25 * frame.noise.a) / 4,
+    );
     const c = 2 * sigma;
     values[k] = mean >= 0 ? Math.sqrt(mean + c) - Math.sqrt(c) : Math.sqrt(c) - Math.sqrt(c - mean);
     weights[k] = Math.exp(step * Math.floor(k / angles)) * (cells.count[k] / cells.all[k]);
@@ -77,4 +79,3 @@ function compressMap(
 export function radiusOfRow(map: { firstRadius: number }, row: number): number {
   return map.firstRadius * Math.exp(logPolar.step * (row + 0.5));
 }
-

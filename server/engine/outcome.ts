@@ -72,6 +72,8 @@ export interface Candidate {
 }
 
 /** What the picture cannot say; the words for each are chosen where people read them. */
+export type Verdict = 'identified' | 'ambiguous' | 'unidentified';
+
 export type Untold =
   | 'half-turn-twin'
   | 'complement'
@@ -114,7 +116,7 @@ export interface FarFieldFinding {
 export type Outcome =
   | {
       readonly kind: 'answer';
-      readonly verdict: 'identified' | 'ambiguous' | 'unidentified';
+      readonly verdict: Verdict;
       /** Best first; at least one unless unidentified. */
       readonly candidates: readonly Candidate[];
       readonly untold: readonly Untold[];

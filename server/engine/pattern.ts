@@ -3,7 +3,17 @@ import type { FarFieldModel } from '#shared/apertures/family.ts';
 import type { Geometry } from '#shared/physics/geometry.ts';
 
 /** Places of the parameters that every pattern has, before its sizes. */
-export const slot = { amplitude: 0, x: 1, y: 2, turn: 3, offset: 4, slopeX: 5, slopeY: 6, blur: 7, sizes: 8 } as const;
+export const slot = {
+  amplitude: 0,
+  x: 1,
+  y: 2,
+  turn: 3,
+  offset: 4,
+  slopeX: 5,
+  slopeY: 6,
+  blur: 7,
+  sizes: 8,
+} as const;
 
 /** ln amplitude, centre px, turn rad, offset and slopes in counts (per 100 px), blur variance px², then ln of each size. */
 export type Parameters = Float64Array;
@@ -12,7 +22,13 @@ export type Parameters = Float64Array;
 export interface PatternEvaluator {
   readonly set: PixelSet;
   /** Writes expected counts and, when `jacobian` is given, the derivatives by the free parameters (columns, n each). */
-  evaluate(p: Parameters, expected: Float64Array, jacobian?: { free: readonly number[]; columns: Float64Array[] }): void;
+  evaluate(
+    p: Parameters,
+    expected: Float64Array,
+    jacobian?: { free: readonly number[]; columns: Float64Array[] },
+  ): void;
+  /** Background in counts at bin k. */
+  background(p: Parameters, k: number): number;
 }
 
 const slopeUnit = 100;
@@ -62,8 +78,13 @@ export function createPattern(
       values[i] = Math.exp(p[slot.sizes + i]) * (i === changed ? 1 + sizeStep : 1);
   }
 
+  const background = (p: Parameters, k: number): number =>
+    p[slot.offset] +
+    (p[slot.slopeX] * (set.x[k] - origin.x) + p[slot.slopeY] * (set.y[k] - origin.y)) / slopeUnit;
+
   return {
     set,
+    background,
     evaluate(p, expected, jacobian) {
       const delta = Math.sqrt(Math.max((set.bin * set.bin) / 12 + p[slot.blur], 1e-3));
       frequencies(p, delta);
@@ -72,10 +93,7 @@ export function createPattern(
       const amplitude = Math.exp(p[slot.amplitude]);
       for (let k = 0; k < n; k++) {
         const mean = (nodes[k] + nodes[n + k] + nodes[2 * n + k] + nodes[3 * n + k]) / 4;
-        expected[k] =
-          amplitude * mean +
-          p[slot.offset] +
-          (p[slot.slopeX] * (set.x[k] - origin.x) + p[slot.slopeY] * (set.y[k] - origin.y)) / slopeUnit;
+        expected[k] = amplitude * mean + background(p, k);
       }
       if (!jacobian) return;
       const { free, columns } = jacobian;

@@ -11,7 +11,12 @@ export interface PixelSet {
 }
 
 /** Every bin all of whose pixels are used, within a radius of a centre. */
-export function allBins(frame: Frame, bin: number, center: { x: number; y: number }, maxRadius: number): PixelSet {
+export function allBins(
+  frame: Frame,
+  bin: number,
+  center: { x: number; y: number },
+  maxRadius: number,
+): PixelSet {
   const columns = Math.floor(frame.width / bin);
   const rows = Math.floor(frame.height / bin);
   const x = new Float64Array(columns * rows);

@@ -10,6 +10,7 @@ export const ellipse = defineFamily({
   parameters: [length('major', 'Major axis'), length('minor', 'Minor axis')],
   rotationPeriod: Math.PI,
   axis: 'major axis',
+  longAxisFirst: true,
   complexity: 2,
   models: [
     {

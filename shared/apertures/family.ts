@@ -69,6 +69,8 @@ export interface ApertureFamily {
   /** What the reported orientation is the direction of ("long axis"), or null for round shapes. */
   readonly axis: string | null;
   readonly models: readonly FarFieldModel[];
+  /** True where the first two sizes are the same kind of size along two axes, the longer one first. */
+  readonly longAxisFirst?: boolean;
   /** Number of degrees of freedom of shape: the measure of "simpler". */
   readonly complexity: number;
   /** Open area in m²; null where a length is not resolved. */

@@ -10,6 +10,7 @@ export const rectangle = defineFamily({
   parameters: [length('length', 'Length'), length('width', 'Width')],
   rotationPeriod: Math.PI,
   axis: 'long axis',
+  longAxisFirst: true,
   complexity: 2,
   models: [
     {

@@ -33,7 +33,7 @@ export const slit = defineFamily({
   outline: (values, extent) => [boxRing(extent, valueOf(values, 'width'))],
   extent: (values) => valueOf(values, 'width'),
   proper: () => true,
-  unitShapes: [2, 3, 4.5, 7, 11, 18, 30].map((ratio) => ({ model: 'beam-lit', values: [1, ratio] })),
+  unitShapes: [1.3, 2, 3, 4.5, 7, 11, 18, 30].map((ratio) => ({ model: 'beam-lit', values: [1, ratio] })),
   kin: [
     {
       family: 'doubleSlit',

@@ -15,6 +15,11 @@ export function farFieldDistance(extent: number, wavelength: number): number {
 }
 
 /** Period in pixels of the finest fringes of an opening of this extent: λL/(extent·pitch). */
-export function pixelsPerFringe(extent: number, wavelength: number, distance: number, pixelPitch: number): number {
+export function pixelsPerFringe(
+  extent: number,
+  wavelength: number,
+  distance: number,
+  pixelPitch: number,
+): number {
   return (wavelength * distance) / (extent * pixelPitch);
 }

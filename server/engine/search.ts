@@ -1,0 +1,154 @@
+import { coarseSearch, type CoarseCandidate } from '#server/engine/coarse.ts';
+import { logPolarMap } from '#server/engine/log-polar.ts';
+import { slot } from '#server/engine/pattern.ts';
+import { allBins, pick, signalToNoise, type PixelSet } from '#server/engine/pixel-set.ts';
+import {
+  fitTrial,
+  freeOf,
+  sizesOf,
+  startTrial,
+  withAmplitude,
+  type Bench,
+  type Trial,
+} from '#server/engine/trial.ts';
+import { familyOf } from '#shared/apertures/registry.ts';
+import { pixelsPerFringe } from '#shared/physics/sampling.ts';
+
+const perFamily = 3;
+const seedCount = 16;
+const samplesPerFringe = 8;
+
+/** Screening tolerates 8 % of what the model leaves out and gives up early. */
+const screening = { residuals: 'stabilised', maxSteps: 14, huber: 4, texture: 0.0064 } as const;
+
+/** The best trial of each model about one centre, by cost on one set of pixels; best first. */
+export function searchAbout(
+  bench: Bench,
+  center: { x: number; y: number },
+  random: () => number,
+  onStep: (step: string, share: number) => void,
+): { trials: Trial[]; set: PixelSet; coarseScore: number } | null {
+  const { geometry, frame } = bench;
+  const frequencyPerPixel = geometry.pixelPitch / (geometry.wavelength * geometry.distance);
+  onStep('Comparing with the atlas', 0);
+  const coarse = coarseSearch(logPolarMap(frame, center), frequencyPerPixel);
+  if (coarse.length === 0) return null;
+  const seeds = chooseSeeds(coarse);
+  const extent = Math.min(...seeds.slice(0, 4).map(extentOf));
+  const period = pixelsPerFringe(extent, geometry.wavelength, geometry.distance, geometry.pixelPitch);
+  const bin = binFor(bench, extent * 1.3);
+  const all = screeningSet(bench, bin, center, Number.POSITIVE_INFINITY, random);
+  const near = screeningSet(bench, bin, center, 8 * period, random);
+  const best = new Map<string, Trial>();
+  const keep = (trial: Trial) => {
+    const key = `${trial.family.id} ${trial.model.id}`;
+    const other = best.get(key);
+    if (!other || trial.cost < other.cost) best.set(key, trial);
+  };
+  seeds.forEach((seed, i) => {
+    const family = familyOf(seed.family);
+    onStep(`Comparing with ${family.label.toLowerCase()}`, 0.15 + (0.55 * i) / seeds.length);
+    const start = startTrial(bench, family, seed.model, seed.values, seed.orientation, center);
+    keep(screen(bench, start, near, all));
+  });
+  onStep('Comparing with neighbouring shapes', 0.7);
+  for (let round = 0; round < 2; round++) expandKin(bench, [...best.values()], center, near, all, keep);
+  const trials = [...best.values()].sort((p, q) => p.cost - q.cost);
+  return { trials, set: all, coarseScore: coarse[0].score };
+}
+
+function chooseSeeds(coarse: readonly CoarseCandidate[]): CoarseCandidate[] {
+  const counts = new Map<string, number>();
+  const seeds: CoarseCandidate[] = [];
+  for (const candidate of coarse) {
+    const n = counts.get(candidate.family) ?? 0;
+    if (n >= perFamily || (seeds.length >= seedCount && n > 0)) continue;
+    counts.set(candidate.family, n + 1);
+    seeds.push(candidate);
+  }
+  return seeds;
+}
+
+function extentOf(seed: CoarseCandidate): number {
+  return familyOf(seed.family).extent(seed.model.toFamily(seed.values));
+}
+
+/** Bin side that leaves enough samples on the finest fringe of an opening of this extent. */
+export function binFor(bench: Bench, extent: number, samples = samplesPerFringe): number {
+  const { geometry } = bench;
+  const period = pixelsPerFringe(extent, geometry.wavelength, geometry.distance, geometry.pixelPitch);
+  return Math.max(1, Math.min(24, Math.floor(period / samples)));
+}
+
+/** Some 2 500 bins: mostly where there is signal, evenly by chance, some for the background. */
+function screeningSet(
+  bench: Bench,
+  bin: number,
+  center: { x: number; y: number },
+  radius: number,
+  random: () => number,
+): PixelSet {
+  const all = allBins(bench.frame, bin, center, radius);
+  return pick(
+    all,
+    2500,
+    0.75,
+    (k) => Math.min(signalToNoise(bench.frame, all, k), 4) + 0.5 * random(),
+    random,
+  );
+}
+
+function screen(bench: Bench, start: Trial, near: PixelSet, all: PixelSet): Trial {
+  const lit = withAmplitude(bench, start, near);
+  const free = freeOf(lit);
+  const first = fitTrial(bench, lit, near, { ...screening, free, maxSteps: 8 });
+  return canonical(fitTrial(bench, first.trial, all, { ...screening, free }).trial);
+}
+
+/** Neighbours of the leading trials, started from the leaders' own solutions. */
+function expandKin(
+  bench: Bench,
+  trials: Trial[],
+  center: { x: number; y: number },
+  near: PixelSet,
+  all: PixelSet,
+  keep: (trial: Trial) => void,
+): void {
+  const leaders = trials.sort((p, q) => p.cost - q.cost).slice(0, 3);
+  for (const leader of leaders)
+    for (const start of kinStarts(bench, leader, center)) {
+      const rival = trials.find((t) => t.family === start.family && t.model === start.model);
+      if (rival && rival.cost < leader.cost * 1.02) continue;
+      keep(screen(bench, start, near, all));
+    }
+}
+
+/** A trial for each kin of a solution, at the kin's start values. */
+export function kinStarts(bench: Bench, trial: Trial, center: { x: number; y: number }): Trial[] {
+  return trial.family.kin.flatMap((kin) => {
+    const family = familyOf(kin.family);
+    const model = family.models.find((m) => m.id === kin.model);
+    const start = kin.start(trial.model.toFamily(sizesOf(trial)));
+    if (!model || !start) return [];
+    const turn = trial.parameters[slot.turn] + start.turn;
+    const begun = startTrial(bench, family, model, start.values, turn, {
+      x: trial.parameters[slot.x] || center.x,
+      y: trial.parameters[slot.y] || center.y,
+    });
+    for (const which of [slot.offset, slot.slopeX, slot.slopeY, slot.blur])
+      begun.parameters[which] = trial.parameters[which];
+    return [begun];
+  });
+}
+
+/** Long axis first: where the sizes came out the other way round, they change places and the axis turns by 90°. */
+export function canonical(trial: Trial): Trial {
+  const [first, second] = [trial.parameters[slot.sizes], trial.parameters[slot.sizes + 1]];
+  const swaps = trial.family.longAxisFirst === true && second > first;
+  if (!swaps) return trial;
+  const parameters = Float64Array.from(trial.parameters);
+  parameters[slot.sizes] = second;
+  parameters[slot.sizes + 1] = first;
+  parameters[slot.turn] += Math.PI / 2;
+  return { ...trial, parameters };
+}
