@@ -77,7 +77,7 @@ export class Fitter {
     while (steps < options.maxSteps) {
       steps += 1;
       this.pattern.evaluate(p, this.#expected, { free, columns: this.#columns });
-      this.#residuals(p, options);
+      this.#residuals(options);
       this.#accumulate(m, normal, gradient);
       let accepted = false;
       let gain = 0;
@@ -133,7 +133,7 @@ export class Fitter {
     while (this.#columns.length < m) this.#columns.push(new Float64Array(this.pattern.set.n));
     this.#transform(p, options);
     this.pattern.evaluate(p, this.#expected, { free: options.free, columns: this.#columns });
-    this.#residuals(p, options);
+    this.#residuals(options);
     const normal = new Float64Array(m * m);
     this.#accumulate(m, normal, new Float64Array(m));
     return invertSymmetric(normal, m);
@@ -145,7 +145,7 @@ export class Fitter {
     while (this.#columns.length < options.free.length) this.#columns.push(new Float64Array(n));
     this.#transform(p, options);
     this.pattern.evaluate(p, this.#expected, { free: options.free, columns: this.#columns });
-    this.#residuals(p, options);
+    this.#residuals(options);
     const worth = new Float64Array(n);
     for (let f = 0; f < options.free.length; f++) {
       const column = this.#columns[f];
@@ -160,7 +160,7 @@ export class Fitter {
   residualsAt(p: Parameters, options: FitOptions): { expected: Float64Array; residual: Float64Array } {
     this.#transform(p, options);
     this.pattern.evaluate(p, this.#expected);
-    this.#residuals(p, options);
+    this.#residuals(options);
     return { expected: this.#expected, residual: this.#residual };
   }
 
@@ -200,7 +200,7 @@ export class Fitter {
 
   #cost(p: Parameters, options: FitOptions): number {
     this.pattern.evaluate(p, this.#expected);
-    this.#residuals(p, options);
+    this.#residuals(options);
     const { n } = this.pattern.set;
     let sum = 0;
     for (let k = 0; k < n; k++) {
@@ -211,7 +211,7 @@ export class Fitter {
   }
 
   /** Residuals over σ, and the factor that turns a derivative of counts into one of the residual. */
-  #residuals(p: Parameters, options: FitOptions): void {
+  #residuals(options: FitOptions): void {
     const { set } = this.pattern;
     const n2 = set.bin * set.bin;
     const a = this.#noise.a / n2;

@@ -55,7 +55,7 @@ function preferSimple(finalists: readonly Finalist[]): Finalist[] {
  * model says, whatever the number of photons.
  */
 function absoluteMisfit(ranking: Ranking, finalist: Finalist): number {
-  const { set, bench } = ranking;
+  const { set, bench, plainNoise } = ranking;
   const fitter = fitterFor(bench, finalist, set);
   const { expected } = fitter.residualsAt(finalist.parameters, ranking.options);
   let sum = 0;
@@ -63,8 +63,9 @@ function absoluteMisfit(ranking: Ranking, finalist: Finalist): number {
   for (let k = 0; k < set.n; k++) {
     const base = fitter.pattern.background(finalist.parameters, k);
     const m = Math.max(expected[k] - base, 0);
-    const variance = varianceAt(bench.frame.noise, m) / (set.bin * set.bin);
-    if (set.d[k] - base < 4 * Math.sqrt(varianceAt(bench.frame.noise, 0) / (set.bin * set.bin))) continue;
+    const variance = varianceAt(plainNoise, m) / (set.bin * set.bin);
+    if (set.d[k] - base < 4 * Math.sqrt(plainNoise.a / (set.bin * set.bin)) && m < 4 * Math.sqrt(variance))
+      continue;
     const r = set.d[k] - expected[k];
     sum += Math.min(25, (r * r) / (variance + (0.05 * m) ** 2));
     n += 1;

@@ -21,6 +21,8 @@ export interface Ranking {
   readonly finalists: readonly Finalist[];
   readonly set: PixelSet;
   readonly options: FitOptions;
+  /** Noise as estimated without any model: what a misfit is measured against. */
+  readonly plainNoise: NoiseLaw;
 }
 
 const middle = { residuals: 'stabilised', maxSteps: 20, huber: 4, texture: 1e-4 } as const;
@@ -56,7 +58,7 @@ export function rankTrials(
     onStep(`Measuring as ${t.family.label.toLowerCase()}`, 0.45 + (0.5 * i) / short.length);
     finalists.push(lastFit(refined, t, set, blurred));
   });
-  return order(refined, finalists, set, blurred);
+  return { ...order(refined, finalists, set, blurred), plainNoise: bench.frame.noise };
 }
 
 /** Every finalist's simpler and richer neighbours get a start from its solution, so that nested shapes lose only on merit. */
@@ -118,7 +120,12 @@ function lastFit(bench: Bench, trial: Trial, set: PixelSet, blur: boolean): Tria
 }
 
 /** Evidence on identical pixels with identical weights: those of the finalist that fits best. */
-function order(bench: Bench, trials: readonly Trial[], set: PixelSet, blur: boolean): Ranking {
+function order(
+  bench: Bench,
+  trials: readonly Trial[],
+  set: PixelSet,
+  blur: boolean,
+): Omit<Ranking, 'plainNoise'> {
   const weights = weightsOf(bench.frame, trials[0], bench, set);
   const scored = trials.map((trial) => {
     const fitter = fitterFor(bench, trial, set);

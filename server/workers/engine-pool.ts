@@ -1,4 +1,5 @@
-import type { Outcome, PictureFacts, Setup } from '#server/engine/outcome.ts';
+import type { Outcome, PictureFacts, UnusableReason } from '#server/engine/outcome.ts';
+import type { BenchValues } from '#shared/contracts/benches.ts';
 import type { Channel, PictureFormat } from '#shared/contracts/exposures.ts';
 
 /** What decoding found out about a picture file. */
@@ -17,19 +18,19 @@ export interface Inspection {
   readonly decoded: DecodedFacts;
   readonly facts: PictureFacts;
   /** Reasons why nothing could be identified in it; empty when it can be tried. */
-  readonly unusable: readonly string[];
+  readonly unusable: readonly UnusableReason[];
   /** 192 × 192 grey PNG about the centre. */
   readonly thumbnail: Uint8Array;
 }
 
 /** Numeric work, always off the request thread. A picture that cannot be decoded rejects with a Refusal. */
 export interface EnginePool {
-  inspect(bytes: Uint8Array, fileName: string, setup: Setup): Promise<Inspection>;
+  inspect(bytes: Uint8Array, fileName: string, bench: BenchValues): Promise<Inspection>;
   /** The measured plane as unsigned 16-bit codes, little endian. */
   pixels(bytes: Uint8Array): Promise<Uint8Array>;
   identify(
     bytes: Uint8Array,
-    setup: Setup,
+    bench: BenchValues,
     onProgress: (step: string, share: number) => void,
     signal: AbortSignal,
   ): Promise<Outcome>;
