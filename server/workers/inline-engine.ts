@@ -1,0 +1,13 @@
+import { identifyTask, inspectTask, pixelsTask } from '#server/workers/tasks.ts';
+import type { EnginePool } from '#server/workers/engine-pool.ts';
+
+/** The engine on the calling thread: for tests, where what counts is the outcome. */
+export function inlineEngine(): EnginePool {
+  return {
+    inspect: inspectTask,
+    pixels: pixelsTask,
+    identify: (bytes, bench, onProgress, signal) =>
+      identifyTask(bytes, bench, onProgress, () => signal.aborted),
+    close: () => Promise.resolve(),
+  };
+}

@@ -1,0 +1,54 @@
+import { availableParallelism } from 'node:os';
+import { MessageChannel, type MessagePort } from 'node:worker_threads';
+import { Piscina } from 'piscina';
+import type { Outcome } from '#server/engine/outcome.ts';
+import { Refusal } from '#server/http/refusal.ts';
+import type { EnginePool, Inspection } from '#server/workers/engine-pool.ts';
+import type { Answer } from '#server/workers/identify.worker.ts';
+import type { Task } from '#server/workers/tasks.ts';
+
+/** A picture that keeps a thread busy for longer than this costs its own job and nothing else. */
+const timeLimit = 5 * 60_000;
+
+/** The engine in worker threads. `file` is the bundled worker. */
+export function createWorkerPool(file: string): EnginePool {
+  const threads = Math.max(1, Math.min(4, availableParallelism()));
+  const pool = new Piscina({
+    filename: file,
+    minThreads: 1,
+    maxThreads: threads,
+    idleTimeout: 60_000,
+    resourceLimits: { maxOldGenerationSizeMb: 1500 },
+  });
+
+  async function run<T>(task: Task, signal: AbortSignal, transfer: readonly MessagePort[] = []): Promise<T> {
+    const limited = AbortSignal.any([signal, AbortSignal.timeout(timeLimit)]);
+    const answer = (await pool.run(task, {
+      signal: limited,
+      transferList: [...transfer] as never,
+    })) as Answer;
+    if ('refusal' in answer) throw new Refusal(answer.refusal.code, answer.refusal.detail);
+    return answer.result as T;
+  }
+
+  const never = new AbortController().signal;
+  return {
+    inspect: (bytes, fileName, bench) => run<Inspection>({ kind: 'inspect', bytes, fileName, bench }, never),
+    pixels: (bytes) => run<Uint8Array>({ kind: 'pixels', bytes }, never),
+    async identify(bytes, bench, onProgress, signal) {
+      const { port1, port2 } = new MessageChannel();
+      port1.on('message', (message: { step: string; share: number }) =>
+        onProgress(message.step, message.share),
+      );
+      port1.unref();
+      try {
+        return await run<Outcome>({ kind: 'identify', bytes, bench, progress: port2 }, signal, [
+          port2 as never,
+        ]);
+      } finally {
+        port1.close();
+      }
+    },
+    close: () => pool.destroy(),
+  };
+}
