@@ -1,0 +1,23 @@
+import type { ReactNode } from 'react';
+
+interface SentenceProps {
+  /** The state of the work in plain words, numbers in <b>. */
+  children: ReactNode;
+  below?: ReactNode;
+  deeds?: ReactNode;
+}
+
+/** The opening of every screen: its headline sentence, one line below it, the deeds at the right. */
+export function Sentence({ children, below, deeds }: SentenceProps) {
+  return (
+    <header className="flex flex-wrap items-start justify-between gap-x-8 gap-y-3 pt-6 pb-4">
+      <div className="min-w-0 max-w-full">
+        <h1 tabIndex={-1} className="sentence">
+          {children}
+        </h1>
+        {below ? <p className="mt-1 text-ink2">{below}</p> : null}
+      </div>
+      {deeds ? <div className="flex flex-wrap items-center gap-2 pt-0.5">{deeds}</div> : null}
+    </header>
+  );
+}
