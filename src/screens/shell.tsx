@@ -7,6 +7,7 @@ import { KeyLine } from '#src/ui/key-line.tsx';
 import { Loading } from '#src/ui/loading.tsx';
 import { Notice } from '#src/ui/notice.tsx';
 import { ProblemNotice } from '#src/ui/problem-notice.tsx';
+import { groupOf } from '#src/features/cases/case-groups.ts';
 import { casesQuery } from '#src/features/cases/queries.ts';
 import { TopLine } from '#src/features/session/top-line.tsx';
 import { listMatches } from '#shared/contracts/matches.ts';
@@ -95,7 +96,7 @@ function useCounts(person: SignedInPerson, ended: boolean): Record<string, numbe
     refetchInterval: 30_000,
   });
   return {
-    '/': cases.data?.rows.filter((row) => row.waitsForYou).length ?? 0,
+    '/': cases.data?.rows.filter((row) => groupOf(row) === 'wait').length ?? 0,
     '/reviews': toDecide.data?.total ?? 0,
   };
 }
