@@ -2,7 +2,7 @@ import { beamLitIntensity } from '#shared/apertures/beam-lit.ts';
 import { defineFamily } from '#shared/apertures/family.ts';
 import { boxDistance, boxRing } from '#shared/apertures/outlines.ts';
 import { length, valueOf } from '#shared/apertures/parameters.ts';
-import { sinc } from '#shared/physics/sinc.ts';
+import { cosPi, sinc } from '#shared/physics/sinc.ts';
 
 /** Two equal slits along u: I = sinc²(a v) cos²(π d v) (Hecht 10.2.2) times sinc²(l u), or the beam's own spot along u. */
 export const doubleSlit = defineFamily({
@@ -22,10 +22,10 @@ export const doubleSlit = defineFamily({
       keys: ['slitWidth', 'separation', 'slitLength'],
       intensity(values, u, v, out, n) {
         const a = values[0];
-        const d = Math.PI * values[1];
+        const d = values[1];
         const l = values[2];
         for (let i = 0; i < n; i++) {
-          const f = sinc(a * v[i]) * Math.cos(d * v[i]) * sinc(l * u[i]);
+          const f = sinc(a * v[i]) * cosPi(d * v[i]) * sinc(l * u[i]);
           out[i] = f * f;
         }
       },
@@ -41,10 +41,10 @@ export const doubleSlit = defineFamily({
       keys: ['slitWidth', 'separation', 'beamExtent'],
       intensity(values, u, v, out, n) {
         const a = values[0];
-        const d = Math.PI * values[1];
+        const d = values[1];
         const extent = values[2];
         for (let i = 0; i < n; i++) {
-          const f = sinc(a * v[i]) * Math.cos(d * v[i]);
+          const f = sinc(a * v[i]) * cosPi(d * v[i]);
           out[i] = f * f * beamLitIntensity(extent, u[i]);
         }
       },

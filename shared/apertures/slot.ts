@@ -3,7 +3,7 @@ import { obroundRing } from '#shared/apertures/outlines.ts';
 import { length, valueOf } from '#shared/apertures/parameters.ts';
 import { jinc } from '#shared/physics/jinc.ts';
 import { obroundMiddle } from '#shared/physics/obround.ts';
-import { sinc } from '#shared/physics/sinc.ts';
+import { cosPi, sinc } from '#shared/physics/sinc.ts';
 
 /**
  * Obround, length along u: with cap radius r = w/2 and half straight length c = (l − w)/2 the amplitude is
@@ -33,7 +33,7 @@ export const slot = defineFamily({
           const b = 2 * Math.PI * v[i] * r;
           const f =
             straight * sinc(2 * u[i] * c) * obroundMiddle(a, b) +
-            round * Math.cos(2 * Math.PI * u[i] * c) * jinc(Math.sqrt(a * a + b * b));
+            round * cosPi(2 * u[i] * c) * jinc(Math.sqrt(a * a + b * b));
           out[i] = f * f;
         }
       },

@@ -1,116 +1,171 @@
+import { besselY1, besselY1Table } from '#shared/physics/bessel-y1.ts';
+import { gaussLegendre } from '#shared/physics/gauss-legendre.ts';
+import { cosPi, sinPi } from '#shared/physics/sinc.ts';
+
 /**
- * C(a, b) = ∫ cos(a cos t) cos(b sin t) cos t dt over −π/2 … π/2: the part of an obround's far field that its straight
- * middle adds (a = 2πur, b = 2πvr with the cap radius r). With a = ρ cos φ, b = ρ sin φ the Jacobi–Anger expansion
- * (Abramowitz & Stegun 9.1.44) gives C = 2J0(ρ) − 4 Σ J2k(ρ) cos 2kφ / (4k² − 1), which fills a table tile by tile as
- * arguments are asked for; between nodes a sixth-order Lagrange interpolation, absolute error below 1e-6.
+ * C(a, b) = ∫ cos(a cos t) cos(b sin t) cos t dt over −π/2 … π/2: the part of an obround's far field that its straight middle
+ * adds (a = 2πur, b = 2πvr with the cap radius r). C(0, 0) = 2; absolute error below 6e-7. Own derivation:
+ *
+ * With a = ρ cos φ, b = ρ sin φ the integral turns into C = 2 sin φ sin b / ρ + 2 cos φ ∫_φ^{π/2} cos(ρ sin x) sin x dx.
+ * Deforming the last one into the complex plane parts it into an end at x = π/2, which is −(π/2) Y1(ρ), and an end at
+ * x = φ, which oscillates as exp(ib) with a *slow* factor D. So nothing that oscillates needs a two-dimensional table:
+ *   ρ < 8            bicubic table of C itself in (a, b);
+ *   w² = ρ − b < 25  table of the slow factor in (w, 1/ρ), Fresnel-like;
+ *   else             seven terms of its asymptotic series in 1/(ρ cos² φ).
  */
+const nearEnd = 8;
+const nearSteps = 16;
+const nearRow = nearEnd * nearSteps + 4;
+const edge = 5;
+const edgeSteps = 24;
+const edgeRow = edge * edgeSteps + 4;
+const inverseSteps = 64 * nearEnd;
+const inverseRows = inverseSteps / nearEnd + 4;
 
-const step = 0.25;
-const tileCells = 32;
-/** Nodes per tile side: five more than cells, so that every cell has its six nodes in one tile. */
-const side = tileCells + 5;
-const tileExtent = tileCells * step;
-const reach = 1024;
-const tilesAcross = reach / tileExtent;
-const tiles: (Float32Array | undefined)[] = new Array<Float32Array | undefined>(tilesAcross * tilesAcross);
+interface Tables {
+  readonly near: Float64Array;
+  readonly real: Float64Array;
+  readonly imaginary: Float64Array;
+  readonly y1: Float64Array;
+}
 
-/** J0, J2, J4 … of ρ by downward recurrence, normalised with J0 + 2 ΣJ2k = 1. */
-function evenBessel(rho: number): Float64Array {
-  const start = 2 * Math.ceil((rho + 24 + 6 * Math.cbrt(rho + 1)) / 2);
-  const even = new Float64Array(start / 2 + 1);
-  let above = 0;
-  let here = 1e-280;
+/** C(a, b) by quadrature: the definition, for the table and for tests. `nodes` must exceed about (a + b)/2 + 12. */
+export function obroundMiddleByQuadrature(a: number, b: number, nodes: number): number {
+  const { x, w } = gaussLegendre(nodes, 0, Math.PI / 2);
   let sum = 0;
-  for (let n = start; n > 0; n--) {
-    if (n % 2 === 0) {
-      even[n / 2] = here;
-      sum += 2 * here;
+  for (let i = 0; i < nodes; i += 1)
+    sum += w[i] * Math.cos(a * Math.cos(x[i])) * Math.cos(b * Math.sin(x[i])) * Math.cos(x[i]);
+  return 2 * sum;
+}
+
+function nearTable(): Float64Array {
+  const t = new Float64Array(nearRow * nearRow);
+  const { x, w } = gaussLegendre(24, 0, Math.PI / 2);
+  const side = nearRow * 24;
+  const cosA = new Float64Array(side);
+  const cosB = new Float64Array(side);
+  for (let i = 0; i < nearRow; i += 1)
+    for (let k = 0; k < 24; k += 1) {
+      const z = (i - 1) / nearSteps;
+      cosA[i * 24 + k] = 2 * w[k] * Math.cos(x[k]) * Math.cos(z * Math.cos(x[k]));
+      cosB[i * 24 + k] = Math.cos(z * Math.sin(x[k]));
     }
-    const below = (2 * n * here) / rho - above;
-    above = here;
-    here = below;
-    if (Math.abs(here) > 1e200) {
-      here *= 1e-200;
-      above *= 1e-200;
-      sum *= 1e-200;
-      for (let k = n >> 1; k < even.length; k++) even[k] *= 1e-200;
+  for (let i = 0; i < nearRow; i += 1)
+    for (let j = 0; j < nearRow; j += 1) {
+      let sum = 0;
+      for (let k = 0; k < 24; k += 1) sum += cosA[i * 24 + k] * cosB[j * 24 + k];
+      t[i * nearRow + j] = sum;
     }
+  return t;
+}
+
+/**
+ * −√2 e^{−iπ/4} ∫_0^∞ exp(−t² − √2(1+i)wt) h(w + e^{−iπ/4}t) dt with h(σ) = (1 − σ²ε)/√(1 − σ²ε/2): the end at x = φ in
+ * the variable σ, sin x = 1 − σ²ε, ε = 1/ρ.
+ */
+function slowFactor(w: number, e: number, x: Float64Array, weight: Float64Array): [number, number] {
+  let re = 0;
+  let im = 0;
+  const r = Math.SQRT1_2;
+  for (let k = 0; k < x.length; k += 1) {
+    const t = x[k];
+    const sr = w + r * t;
+    const si = -r * t;
+    const qr = (sr * sr - si * si) * e;
+    const qi = 2 * sr * si * e;
+    const rootR = 1 - qr / 2;
+    const rootI = -qi / 2;
+    const modulus = Math.hypot(rootR, rootI) ** -0.5;
+    const phase = -Math.atan2(rootI, rootR) / 2;
+    const hr = modulus * ((1 - qr) * Math.cos(phase) + qi * Math.sin(phase));
+    const hi = modulus * ((1 - qr) * Math.sin(phase) - qi * Math.cos(phase));
+    const size = weight[k] * Math.exp(-t * t - Math.SQRT2 * w * t);
+    const angle = -Math.SQRT2 * w * t - Math.PI / 4;
+    re -= size * (hr * Math.cos(angle) - hi * Math.sin(angle));
+    im -= size * (hr * Math.sin(angle) + hi * Math.cos(angle));
   }
-  even[0] = here;
-  sum += here;
-  for (let k = 0; k < even.length; k++) even[k] /= sum;
-  return even;
+  return [Math.SQRT2 * re, Math.SQRT2 * im];
 }
 
-function exactC(a: number, b: number): number {
-  const rho = Math.hypot(a, b);
-  if (rho < 1e-6) return 2;
-  const even = evenBessel(rho);
-  const cos2 = (a * a - b * b) / (rho * rho);
-  // cos 2kφ by Chebyshev's recurrence from cos 2φ.
-  let before = 1;
-  let here = cos2;
-  let sum = 0;
-  for (let k = 1; k < even.length; k++) {
-    sum += (even[k] * here) / (4 * k * k - 1);
-    const next = 2 * cos2 * here - before;
-    before = here;
-    here = next;
-  }
-  return 2 * even[0] - 4 * sum;
+let tables: Tables | undefined;
+
+/** Built at the first call: about 60 ms, 300 kB. */
+function tabulate(): Tables {
+  const real = new Float64Array(inverseRows * edgeRow);
+  const imaginary = new Float64Array(inverseRows * edgeRow);
+  const { x, w } = gaussLegendre(48, 0, 6.5);
+  for (let i = 0; i < inverseRows; i += 1)
+    for (let j = 0; j < edgeRow; j += 1) {
+      const [re, im] = slowFactor((j - 1) / edgeSteps, (i - 1) / inverseSteps, x, w);
+      real[i * edgeRow + j] = re;
+      imaginary[i * edgeRow + j] = im;
+    }
+  return { near: nearTable(), real, imaginary, y1: besselY1Table() };
 }
 
-function fillTile(ta: number, tb: number): Float32Array {
-  const tile = new Float32Array(side * side);
-  for (let j = 0; j < side; j++)
-    for (let i = 0; i < side; i++)
-      tile[j * side + i] = exactC(
-        Math.abs(ta * tileExtent + (i - 2) * step),
-        Math.abs(tb * tileExtent + (j - 2) * step),
-      );
-  return tile;
-}
-
-const wa = new Float64Array(6);
-const wb = new Float64Array(6);
-
-/** Lagrange weights for nodes −2 … 3 at offset f in [0, 1). */
-function weights(f: number, w: Float64Array): void {
-  const m2 = f + 2;
-  const m1 = f + 1;
-  const p1 = f - 1;
-  const p2 = f - 2;
-  const p3 = f - 3;
-  w[0] = -(m1 * f * p1 * p2 * p3) / 120;
-  w[1] = (m2 * f * p1 * p2 * p3) / 24;
-  w[2] = -(m2 * m1 * p1 * p2 * p3) / 12;
-  w[3] = (m2 * m1 * f * p2 * p3) / 12;
-  w[4] = -(m2 * m1 * f * p1 * p3) / 24;
-  w[5] = (m2 * m1 * f * p1 * p2) / 120;
-}
-
-/** C(a, b) for dimensionless arguments of either sign; see the head of this file. */
-export function obroundMiddle(a: number, b: number): number {
-  const x = (a < 0 ? -a : a) / step;
-  const y = (b < 0 ? -b : b) / step;
-  const i = x | 0;
-  const j = y | 0;
-  const ta = (i / tileCells) | 0;
-  const tb = (j / tileCells) | 0;
-  if (ta >= tilesAcross || tb >= tilesAcross) return exactC(x * step, y * step);
-  const tile = (tiles[tb * tilesAcross + ta] ??= fillTile(ta, tb));
-  weights(x - i, wa);
-  weights(y - j, wb);
-  let k = (j - tb * tileCells) * side + (i - ta * tileCells);
-  let sum = 0;
-  for (let m = 0; m < 6; m++, k += side)
-    sum +=
-      wb[m] *
-      (wa[0] * tile[k] +
-        wa[1] * tile[k + 1] +
-        wa[2] * tile[k + 2] +
-        wa[3] * tile[k + 3] +
-        wa[4] * tile[k + 4] +
-        wa[5] * tile[k + 5]);
+/** Cubic Lagrange weights are written out so that nothing is allocated. */
+function bicubic(t: Float64Array, row: number, s: number, r: number): number {
+  const i = s | 0;
+  const j = r | 0;
+  const d = s - i;
+  const f = r - j;
+  const dm = d - 1;
+  const dmm = d - 2;
+  const dp = d + 1;
+  const a0 = (-d * dm * dmm) / 6;
+  const a1 = (dp * dm * dmm) / 2;
+  const a2 = (-dp * d * dmm) / 2;
+  const a3 = (dp * d * dm) / 6;
+  const fm = f - 1;
+  const fmm = f - 2;
+  const fp = f + 1;
+  const b0 = (-f * fm * fmm) / 6;
+  const b1 = (fp * fm * fmm) / 2;
+  const b2 = (-fp * f * fmm) / 2;
+  const b3 = (fp * f * fm) / 6;
+  let o = i * row + j;
+  let sum = a0 * (b0 * t[o] + b1 * t[o + 1] + b2 * t[o + 2] + b3 * t[o + 3]);
+  o += row;
+  sum += a1 * (b0 * t[o] + b1 * t[o + 1] + b2 * t[o + 2] + b3 * t[o + 3]);
+  o += row;
+  sum += a2 * (b0 * t[o] + b1 * t[o + 1] + b2 * t[o + 2] + b3 * t[o + 3]);
+  o += row;
+  sum += a3 * (b0 * t[o] + b1 * t[o + 1] + b2 * t[o + 2] + b3 * t[o + 3]);
   return sum;
+}
+
+/** C(a, b) for dimensionless arguments of either sign; see the head of this file. Allocates nothing after the first call. */
+export function obroundMiddle(signedA: number, signedB: number): number {
+  const t = (tables ??= tabulate());
+  const a = signedA < 0 ? -signedA : signedA;
+  const b = signedB < 0 ? -signedB : signedB;
+  const rho = Math.sqrt(a * a + b * b);
+  if (rho < nearEnd) return bicubic(t.near, nearRow, a * nearSteps, b * nearSteps);
+  const e = 1 / rho;
+  const y = b * e;
+  const c = a * e;
+  const turns = b / Math.PI;
+  const sine = sinPi(turns);
+  const cosine = cosPi(turns);
+  const far = -Math.PI * c * besselY1(t.y1, rho);
+  const w2 = (a * a) / (rho + b);
+  if (w2 < edge * edge) {
+    const s = e * inverseSteps;
+    const r = Math.sqrt(w2) * edgeSteps;
+    const scale = 2 * c * Math.sqrt(e);
+    const re = bicubic(t.real, edgeRow, s, r);
+    const im = bicubic(t.imaginary, edgeRow, s, r);
+    return far + 2 * e * y * sine + scale * (cosine * re - sine * im);
+  }
+  const q = e / (c * c);
+  const q2 = q * q;
+  const yy = y * y;
+  const p3 = 3 + 12 * yy;
+  const p5 = 45 + yy * (540 + 360 * yy);
+  const p7 = 1575 + yy * (37800 + yy * (75600 + 20160 * yy));
+  const p4 = 45 + 60 * yy;
+  const p6 = 1575 + yy * (6300 + 2520 * yy);
+  const re = q * (-1 + q2 * (p3 + q2 * (-p5 + q2 * p7)));
+  const im = y * q2 * (-3 + q2 * (p4 - q2 * p6));
+  return far + 2 * e * (cosine * re - sine * im);
 }
