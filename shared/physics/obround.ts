@@ -103,35 +103,47 @@ function tabulate(): Tables {
   return { near: nearTable(), real, imaginary, y1: besselY1Table() };
 }
 
-/** Cubic Lagrange weights are written out so that nothing is allocated. */
-function bicubic(t: Float64Array, row: number, s: number, r: number): number {
+/** Sums of the last interpolation; kept outside so that nothing is allocated. */
+const sums = new Float64Array(2);
+
+/**
+ * Cubic Lagrange interpolation of two tables at once, in `s` along rows and `r` along columns, shifted by one node so that
+ * every stencil is complete. Writes `sums`.
+ */
+function bicubic(first: Float64Array, second: Float64Array | null, row: number, s: number, r: number): void {
   const i = s | 0;
   const j = r | 0;
   const d = s - i;
   const f = r - j;
-  const dm = d - 1;
-  const dmm = d - 2;
-  const dp = d + 1;
-  const a0 = (-d * dm * dmm) / 6;
-  const a1 = (dp * dm * dmm) / 2;
-  const a2 = (-dp * d * dmm) / 2;
-  const a3 = (dp * d * dm) / 6;
-  const fm = f - 1;
-  const fmm = f - 2;
-  const fp = f + 1;
-  const b0 = (-f * fm * fmm) / 6;
-  const b1 = (fp * fm * fmm) / 2;
-  const b2 = (-fp * f * fmm) / 2;
-  const b3 = (fp * f * fm) / 6;
-  let o = i * row + j;
-  let sum = a0 * (b0 * t[o] + b1 * t[o + 1] + b2 * t[o + 2] + b3 * t[o + 3]);
-  o += row;
-  sum += a1 * (b0 * t[o] + b1 * t[o + 1] + b2 * t[o + 2] + b3 * t[o + 3]);
-  o += row;
-  sum += a2 * (b0 * t[o] + b1 * t[o + 1] + b2 * t[o + 2] + b3 * t[o + 3]);
-  o += row;
-  sum += a3 * (b0 * t[o] + b1 * t[o + 1] + b2 * t[o + 2] + b3 * t[o + 3]);
-  return sum;
+  const dd = (d - 1) * (d - 2);
+  const dp = d * (d + 1);
+  const a0 = (-d * dd) / 6;
+  const a1 = ((d + 1) * dd) / 2;
+  const a2 = (-dp * (d - 2)) / 2;
+  const a3 = (dp * (d - 1)) / 6;
+  const ff = (f - 1) * (f - 2);
+  const fp = f * (f + 1);
+  const b0 = (-f * ff) / 6;
+  const b1 = ((f + 1) * ff) / 2;
+  const b2 = (-fp * (f - 2)) / 2;
+  const b3 = (fp * (f - 1)) / 6;
+  const k0 = i * row + j;
+  const k1 = k0 + row;
+  const k2 = k1 + row;
+  const k3 = k2 + row;
+  const t = first;
+  sums[0] =
+    a0 * (b0 * t[k0] + b1 * t[k0 + 1] + b2 * t[k0 + 2] + b3 * t[k0 + 3]) +
+    a1 * (b0 * t[k1] + b1 * t[k1 + 1] + b2 * t[k1 + 2] + b3 * t[k1 + 3]) +
+    a2 * (b0 * t[k2] + b1 * t[k2 + 1] + b2 * t[k2 + 2] + b3 * t[k2 + 3]) +
+    a3 * (b0 * t[k3] + b1 * t[k3 + 1] + b2 * t[k3 + 2] + b3 * t[k3 + 3]);
+  if (!second) return;
+  const z = second;
+  sums[1] =
+    a0 * (b0 * z[k0] + b1 * z[k0 + 1] + b2 * z[k0 + 2] + b3 * z[k0 + 3]) +
+    a1 * (b0 * z[k1] + b1 * z[k1 + 1] + b2 * z[k1 + 2] + b3 * z[k1 + 3]) +
+    a2 * (b0 * z[k2] + b1 * z[k2 + 1] + b2 * z[k2 + 2] + b3 * z[k2 + 3]) +
+    a3 * (b0 * z[k3] + b1 * z[k3 + 1] + b2 * z[k3 + 2] + b3 * z[k3 + 3]);
 }
 
 /** C(a, b) for dimensionless arguments of either sign; see the head of this file. Allocates nothing after the first call. */
@@ -140,7 +152,10 @@ export function obroundMiddle(signedA: number, signedB: number): number {
   const a = signedA < 0 ? -signedA : signedA;
   const b = signedB < 0 ? -signedB : signedB;
   const rho = Math.sqrt(a * a + b * b);
-  if (rho < nearEnd) return bicubic(t.near, nearRow, a * nearSteps, b * nearSteps);
+  if (rho < nearEnd) {
+    bicubic(t.near, null, nearRow, a * nearSteps, b * nearSteps);
+    return sums[0];
+  }
   const e = 1 / rho;
   const y = b * e;
   const c = a * e;
@@ -153,9 +168,8 @@ export function obroundMiddle(signedA: number, signedB: number): number {
     const s = e * inverseSteps;
     const r = Math.sqrt(w2) * edgeSteps;
     const scale = 2 * c * Math.sqrt(e);
-    const re = bicubic(t.real, edgeRow, s, r);
-    const im = bicubic(t.imaginary, edgeRow, s, r);
-    return far + 2 * e * y * sine + scale * (cosine * re - sine * im);
+    bicubic(t.real, t.imaginary, edgeRow, s, r);
+    return far + 2 * e * y * sine + scale * (cosine * sums[0] - sine * sums[1]);
   }
   const q = e / (c * c);
   const q2 = q * q;
