@@ -1,6 +1,6 @@
-import { besselY1, besselY1Table } from '#shared/physics/bessel-y1.ts';
 import { gaussLegendre } from '#shared/physics/gauss-legendre.ts';
 import { cosPi, sinPi } from '#shared/physics/sinc.ts';
+import { tabulatedY1, y1Table } from '#shared/physics/y1-table.ts';
 
 /**
  * C(a, b) = ∫ cos(a cos t) cos(b sin t) cos t dt over −π/2 … π/2: the part of an obround's far field that its straight middle
@@ -100,7 +100,7 @@ function tabulate(): Tables {
       real[i * edgeRow + j] = re;
       imaginary[i * edgeRow + j] = im;
     }
-  return { near: nearTable(), real, imaginary, y1: besselY1Table() };
+  return { near: nearTable(), real, imaginary, y1: y1Table() };
 }
 
 /** Sums of the last interpolation; kept outside so that nothing is allocated. */
@@ -162,7 +162,7 @@ export function obroundMiddle(signedA: number, signedB: number): number {
   const turns = b / Math.PI;
   const sine = sinPi(turns);
   const cosine = cosPi(turns);
-  const far = -Math.PI * c * besselY1(t.y1, rho);
+  const far = -Math.PI * c * tabulatedY1(t.y1, rho);
   const w2 = (a * a) / (rho + b);
   if (w2 < edge * edge) {
     const s = e * inverseSteps;

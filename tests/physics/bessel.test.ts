@@ -1,9 +1,9 @@
 import { describe, expect, it } from 'vitest';
-import { besselJ0, besselJ1 } from '#shared/physics/bessel.ts';
-import { besselY1, besselY1Table } from '#shared/physics/bessel-y1.ts';
+import { besselJ0, besselJ1, besselY1 } from '#shared/physics/bessel.ts';
 import { jinc } from '#shared/physics/jinc.ts';
 import { obroundMiddle, obroundMiddleByQuadrature } from '#shared/physics/obround.ts';
 import { cosPi, sinPi, sinc } from '#shared/physics/sinc.ts';
+import { tabulatedY1, y1Table } from '#shared/physics/y1-table.ts';
 
 describe('Bessel functions', () => {
   // Abramowitz & Stegun, Table 9.1; DLMF 10.
@@ -57,16 +57,12 @@ describe('Bessel functions', () => {
 
   it('J and Y keep their Wronskian, which ties Y1 to J1', () => {
     // DLMF 10.5.2: J1 Y0 − J0 Y1 = 2/(πx) and Y0 = Y1/x + Y1′ (10.6.2).
-    const t = besselY1Table();
     for (const x of [9, 20, 75, 300]) {
       const h = 1e-2;
       const slope =
-        (8 * (besselY1(t, x + h) - besselY1(t, x - h)) - besselY1(t, x + 2 * h) + besselY1(t, x - 2 * h)) /
-        (12 * h);
-      const y0 = besselY1(t, x) / x + slope;
-      expect(Math.abs(besselJ1(x) * y0 - besselJ0(x) * besselY1(t, x) - 2 / (Math.PI * x))).toBeLessThan(
-        2e-6,
-      );
+        (8 * (besselY1(x + h) - besselY1(x - h)) - besselY1(x + 2 * h) + besselY1(x - 2 * h)) / (12 * h);
+      const y0 = besselY1(x) / x + slope;
+      expect(Math.abs(besselJ1(x) * y0 - besselJ0(x) * besselY1(x) - 2 / (Math.PI * x))).toBeLessThan(2e-6);
     }
   });
 });
@@ -78,6 +74,12 @@ describe('the tables of the closed forms', () => {
       worst = Math.max(worst, Math.abs(jinc(x) - (2 * besselJ1(x)) / x), Math.abs(jinc(-x) - jinc(x)));
     expect(worst).toBeLessThan(1e-9);
     expect(jinc(0)).toBe(1);
+  });
+
+  it('give Y1 within 1e-7 from 8 on', () => {
+    const t = y1Table();
+    for (let x = 8; x < 700; x += 0.0713)
+      expect(Math.abs(tabulatedY1(t, x) - besselY1(x))).toBeLessThan(1e-7);
   });
 
   it('give sin πt, cos πt and sinc within 1e-13', () => {
