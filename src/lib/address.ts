@@ -10,7 +10,8 @@ export function address<E extends Endpoint>(
   const values = (params ?? {}) as Record<string, string>;
   const path = endpoint.path.replace(/:(\w+)/g, (_, key: string) => encodeURIComponent(values[key] ?? ''));
   const search = new URLSearchParams();
-  for (const [key, value] of Object.entries(query ?? {}))
+  const asked: Record<string, string | number | undefined> = { ...(query as object) };
+  for (const [key, value] of Object.entries(asked))
     if (value !== undefined && value !== '') search.set(key, String(value));
   const text = search.toString();
   return text ? `${path}?${text}` : path;

@@ -22,7 +22,7 @@ interface RecordForm<In extends FieldValues, Out extends FieldValues> {
  */
 export function useRecordForm<In extends FieldValues, Out extends FieldValues>(record: RecordForm<In, Out>) {
   const { schema, defaults, fields, save, tidy } = record;
-  const judge = zodResolver(schema) as Resolver<In, unknown, Out>;
+  const judge: Resolver<In, unknown, Out> = zodResolver<In, unknown, Out>(schema);
   const form = useForm<In, unknown, Out>({
     defaultValues: defaults,
     resolver: (values, context, options) => judge(tidy ? tidy(values) : values, context, options),

@@ -1,6 +1,6 @@
 import { useState, type ReactNode } from 'react';
 import { Controller, useWatch } from 'react-hook-form';
-import { z } from 'zod';
+import type { z } from 'zod';
 import { useRecordForm } from '#src/lib/use-record-form.ts';
 import { Button, ButtonLink } from '#src/ui/button.tsx';
 import { CheckBox } from '#src/ui/check-box.tsx';

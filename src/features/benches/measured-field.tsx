@@ -1,4 +1,4 @@
-import { useController, type Control } from 'react-hook-form';
+import { Controller, useController, type Control } from 'react-hook-form';
 import { QuantityField } from '#src/ui/quantity-field.tsx';
 import type { BenchDraft, BenchInput } from '#src/features/benches/bench-form.tsx';
 import type { Unit } from '#shared/quantities.ts';
@@ -12,22 +12,28 @@ interface MeasuredFieldProps {
 
 /** A value of the bench with its standard uncertainty. */
 export function MeasuredField({ control, name, label, unit }: MeasuredFieldProps) {
-  const value = useController({ control, name: `${name}.value` });
   const u = useController({ control, name: `${name}.u` });
+  const { ref: uRef, value: uValue, onChange: onU } = u.field;
   return (
-    <QuantityField
-      label={label}
-      unit={unit}
-      value={value.field.value}
-      onValue={value.field.onChange}
-      onBlur={value.field.onBlur}
-      ref={value.field.ref}
-      error={value.fieldState.error?.message}
-      u={u.field.value}
-      onU={u.field.onChange}
-      uRef={u.field.ref}
-      uError={u.fieldState.error?.message}
-      hint="± standard uncertainty (1 σ)"
+    <Controller
+      control={control}
+      name={`${name}.value`}
+      render={({ field, fieldState }) => (
+        <QuantityField
+          label={label}
+          unit={unit}
+          value={field.value}
+          onValue={field.onChange}
+          onBlur={field.onBlur}
+          ref={field.ref}
+          error={fieldState.error?.message}
+          u={uValue}
+          onU={onU}
+          uRef={uRef}
+          uError={u.fieldState.error?.message}
+          hint="± standard uncertainty (1 σ)"
+        />
+      )}
     />
   );
 }

@@ -1,4 +1,4 @@
-import { useController, useWatch, type FieldError, type UseFormReturn } from 'react-hook-form';
+import { Controller, useWatch, type FieldError, type UseFormReturn } from 'react-hook-form';
 import { ApertureSketch } from '#src/ui/aperture-sketch.tsx';
 import { QuantityField } from '#src/ui/quantity-field.tsx';
 import { Select } from '#src/ui/select.tsx';
@@ -67,43 +67,60 @@ export function DrawingFields({ form }: { form: CaseFormReturn }) {
 }
 
 function SizeRow({ form, parameter: p }: { form: CaseFormReturn; parameter: Parameter }) {
-  const unit = p.kind === 'length' ? 'um' : null;
-  const nominal = useController({ control: form.control, name: `drawing.aperture.values.${p.key}` });
-  const lower = useController({ control: form.control, name: `drawing.limits.${p.key}.lower` });
-  const upper = useController({ control: form.control, name: `drawing.limits.${p.key}.upper` });
   // A rule about both limits sits on the pair, not on a half.
   const pair = form.formState.errors.drawing?.limits?.[p.key] as FieldError | undefined;
   return (
     <div className="grid gap-3 sm:grid-cols-3">
-      <QuantityField
+      <SizeField
+        form={form}
+        parameter={p}
+        name={`drawing.aperture.values.${p.key}`}
         label={p.label}
-        unit={unit}
-        value={nominal.field.value}
-        onValue={nominal.field.onChange}
-        onBlur={nominal.field.onBlur}
-        ref={nominal.field.ref}
-        error={nominal.fieldState.error?.message}
         hint={p.nullable ? 'Empty: endless, as the beam sees it.' : undefined}
       />
-      <QuantityField
+      <SizeField
+        form={form}
+        parameter={p}
+        name={`drawing.limits.${p.key}.lower`}
         label="Lower limit"
-        unit={unit}
-        value={lower.field.value ?? null}
-        onValue={lower.field.onChange}
-        onBlur={lower.field.onBlur}
-        ref={lower.field.ref}
-        error={limitMessage(lower.fieldState.error) ?? pair?.message}
+        more={pair?.message}
       />
-      <QuantityField
-        label="Upper limit"
-        unit={unit}
-        value={upper.field.value ?? null}
-        onValue={upper.field.onChange}
-        onBlur={upper.field.onBlur}
-        ref={upper.field.ref}
-        error={limitMessage(upper.fieldState.error)}
-      />
+      <SizeField form={form} parameter={p} name={`drawing.limits.${p.key}.upper`} label="Upper limit" />
     </div>
+  );
+}
+
+interface SizeFieldProps {
+  form: CaseFormReturn;
+  parameter: Parameter;
+  name: `drawing.aperture.values.${string}` | `drawing.limits.${string}.${'lower' | 'upper'}`;
+  label: string;
+  hint?: string | undefined;
+  more?: string | undefined;
+}
+
+function SizeField({ form, parameter, name, label, hint, more }: SizeFieldProps) {
+  return (
+    <Controller
+      control={form.control}
+      name={name}
+      render={({ field, fieldState }) => (
+        <QuantityField
+          label={label}
+          unit={parameter.kind === 'length' ? 'um' : null}
+          value={field.value ?? null}
+          onValue={field.onChange}
+          onBlur={field.onBlur}
+          ref={field.ref}
+          error={
+            (name.startsWith('drawing.limits')
+              ? limitMessage(fieldState.error)
+              : fieldState.error?.message) ?? more
+          }
+          hint={hint}
+        />
+      )}
+    />
   );
 }
 

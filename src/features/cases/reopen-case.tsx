@@ -1,6 +1,5 @@
 import { useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
-import type { z } from 'zod';
 import { call } from '#src/lib/call.ts';
 import { useRecordForm } from '#src/lib/use-record-form.ts';
 import { Button } from '#src/ui/button.tsx';
@@ -13,7 +12,7 @@ export function ReopenCase({ caseId }: { caseId: string }) {
   const client = useQueryClient();
   const [asking, setAsking] = useState(false);
   const { form, submit, busy, problem, more } = useRecordForm({
-    schema: reopenCase.body as z.ZodType<{ reason: string }, { reason: string }>,
+    schema: reopenCase.body,
     defaults: { reason: '' },
     fields: ['reason'],
     save: async (body) => {

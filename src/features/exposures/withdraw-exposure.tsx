@@ -1,6 +1,5 @@
 import { useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
-import { z } from 'zod';
 import { call } from '#src/lib/call.ts';
 import { useRecordForm } from '#src/lib/use-record-form.ts';
 import { Button } from '#src/ui/button.tsx';
@@ -25,7 +24,7 @@ export function WithdrawExposure({ exposure }: { exposure: Exposure }) {
 function Ask({ exposure, onClose }: { exposure: Exposure; onClose: () => void }) {
   const client = useQueryClient();
   const { form, submit, busy, problem, more } = useRecordForm({
-    schema: withdrawExposure.body as z.ZodType<{ reason: string }, { reason: string }>,
+    schema: withdrawExposure.body,
     defaults: { reason: '' },
     fields: ['reason'],
     save: async (body) => {
