@@ -6,6 +6,8 @@ import { units, type Unit } from '#shared/quantities.ts';
 
 interface QuantityFieldProps {
   label: string;
+  /** What the label speaks of, where several fields carry the same label: for readers of the screen. */
+  of?: string;
   unit: Unit | null;
   /** Metres or radians. */
   value: TypedNumber | undefined;
@@ -26,7 +28,7 @@ const notANumber = 'This is not a number. Use digits, with a point or a comma.';
 
 /** A quantity as a pair: value | ± standard uncertainty, one unit. SI in, SI out. */
 export function QuantityField(props: QuantityFieldProps) {
-  const { label, unit, value, onValue, u, onU, hint, onBlur, ref, uRef, className } = props;
+  const { label, of, unit, value, onValue, u, onU, hint, onBlur, ref, uRef, className } = props;
   const id = useId();
   const note = useId();
   const error = Number.isNaN(value) ? notANumber : props.error;
@@ -36,8 +38,11 @@ export function QuantityField(props: QuantityFieldProps) {
   return (
     <div className={classNames('min-w-0', className)}>
       <label htmlFor={id} className="label mb-1 block text-ink2">
-        {label}
-        {unitLabel ? <span className="sr-only"> in {unitLabel}</span> : null}
+        {label}{' '}
+        <span className="sr-only">
+          {of ? `of the ${of.toLowerCase()} ` : ''}
+          {unitLabel ? `in ${unitLabel}` : ''}
+        </span>
       </label>
       <div className="flex gap-[2px]">
         <Half refused={Boolean(error)} suffix={unitLabel} grow>

@@ -107,6 +107,7 @@ function SizeField({ form, parameter, name, label, hint, more }: SizeFieldProps)
       render={({ field, fieldState }) => (
         <QuantityField
           label={label}
+          {...(name.startsWith('drawing.limits') ? { of: parameter.label } : {})}
           unit={parameter.kind === 'length' ? 'um' : null}
           value={field.value ?? null}
           onValue={field.onChange}
