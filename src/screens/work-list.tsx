@@ -15,7 +15,7 @@ import { CaseGlance } from '#src/features/cases/case-glance.tsx';
 import { caseGroups, groupOf, groupTitles, type CaseGroup } from '#src/features/cases/case-groups.ts';
 import { CaseLedger } from '#src/features/cases/case-ledger.tsx';
 import { casesQuery } from '#src/features/cases/queries.ts';
-import { WorkListSentence } from '#src/features/cases/work-list-sentence.tsx';
+import { WorkListRest, WorkListSentence } from '#src/features/cases/work-list-sentence.tsx';
 
 export function Component() {
   useTitle('Work list');
@@ -34,6 +34,7 @@ export function Component() {
   const groups = caseGroups
     .map((group) => ({ group, rows: rows.filter((row) => groupOf(row) === group) }))
     .filter((g) => g.rows.length > 0);
+  const counts = cases.data ? new Map(groups.map((g) => [g.group, g.rows.length])) : null;
   const shown = show ? groups.filter((g) => g.group === show) : groups;
   const order = shown.flatMap((g) => g.rows);
   const current = order.find((row) => row.id === focused) ?? order[0] ?? null;
@@ -77,7 +78,10 @@ export function Component() {
               </button>
             </>
           ) : (
-            `${printNow(now)}.`
+            <>
+              {printNow(now)}.
+              <WorkListRest counts={counts} show={show} onShow={filter} />
+            </>
           )
         }
         deeds={
@@ -89,7 +93,7 @@ export function Component() {
         }
       >
         <WorkListSentence
-          counts={cases.data ? new Map(groups.map((g) => [g.group, g.rows.length])) : null}
+          counts={counts}
           found={q ? (cases.data?.total ?? null) : null}
           show={show}
           onShow={filter}

@@ -15,7 +15,7 @@ export function BenchLine({ bench }: { bench: BenchValues }) {
       <Measured {...bench.distance} unit="mm" />, <Measured {...bench.pixelPitch} unit="um" /> per pixel,{' '}
       {geometryWords[bench.geometry]}, {bench.bitDepth} bit {bench.encoding === 'srgb' ? 'sRGB' : 'linear'}
       {bench.mirrored ? ', seen mirrored' : ''}
-      <span className="text-ink3"> (U, k = 2)</span>
+      <span className="text-ink3"> (U, k = 2)</span>
     </span>
   );
 }

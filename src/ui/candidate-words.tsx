@@ -14,14 +14,15 @@ export function CandidateSizes({ candidate, withU }: CandidateSizesProps) {
   const shown = familyOf(candidate.family).parameters.filter(
     (p) => p.kind === 'length' && candidate.dimensions[p.key],
   );
+  const lastValue = shown.findLastIndex((p) => candidate.dimensions[p.key].value !== null);
   return (
     <>
       {shown.map((p, i) => {
         const d = candidate.dimensions[p.key];
-        const last = i === shown.length - 1;
+        const last = i === lastValue;
         return (
           <span key={p.key}>
-            {i > 0 ? ' by ' : ''}
+            {i > 0 ? (d.value === null ? ', ' : ' by ') : ''}
             {d.value === null ? (
               'length not resolved'
             ) : d.bound ? (

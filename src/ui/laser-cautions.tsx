@@ -7,7 +7,7 @@ export function LaserCautions({ wavelength, className }: { wavelength?: number |
   return (
     <Notice tone="warn" lead="Laser on the bench." className={className ?? ''}>
       Never look into the beam or a mirror-like reflection. Attenuate before the camera. Know the laser’s
-      class (IEC 60825-1) and wear eyewear chosen{light || ' for its wavelength'}. Your local rules and your
+      class (IEC 60825-1) and wear eyewear chosen{light || ' for its wavelength'}. Your local rules and your
       laser safety officer come first.
     </Notice>
   );

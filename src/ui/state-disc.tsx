@@ -73,7 +73,9 @@ function paint(context: CanvasRenderingContext2D, picture: HTMLCanvasElement, st
   if (wholePicture.includes(stage)) half(seam, -apart);
 }
 
-const hair = { stroke: 'var(--edge)', strokeWidth: 1.6, fill: 'none' } as const;
+/** Lines keep their width at every size of the disc. */
+const thin = { vectorEffect: 'non-scaling-stroke', fill: 'none' } as const;
+const hair = { ...thin, stroke: 'var(--edge)', strokeWidth: 1 } as const;
 
 function Overlay({ stage, progress }: { stage: CaseStage; progress: number }) {
   const turned = `rotate(${-seamDegrees})`;
@@ -120,7 +122,7 @@ function Overlay({ stage, progress }: { stage: CaseStage; progress: number }) {
       return (
         <g transform={turned}>
           <Seam from={-48} to={48} />
-          <path d="M0 0V48" stroke="var(--over)" strokeWidth="2.4" />
+          <path d="M0 0V48" {...thin} stroke="var(--over)" strokeWidth="1.3" />
         </g>
       );
     case 'identified':
@@ -128,7 +130,7 @@ function Overlay({ stage, progress }: { stage: CaseStage; progress: number }) {
       return (
         <g transform={turned}>
           <Seam from={-48} to={48} />
-          <path d="M-54 0h7M47 0h7" stroke="var(--ink)" strokeWidth="2.4" />
+          <path d="M-54 0h7M47 0h7" {...thin} stroke="var(--ink)" strokeWidth="1.6" />
           {stage === 'in-review' ? <circle r="52" {...hair} strokeDasharray="3 4" /> : null}
         </g>
       );
@@ -142,19 +144,19 @@ function Overlay({ stage, progress }: { stage: CaseStage; progress: number }) {
       return (
         <g transform={turned}>
           <Seam from={-48} to={48} />
-          <path d="M0-54V54" stroke="var(--bad)" strokeWidth="4" />
+          <path d="M0-54V54" {...thin} stroke="var(--bad)" strokeWidth="2.2" />
         </g>
       );
     case 'confirmed':
       return (
         <g transform={turned}>
           <Seam from={-48} to={48} />
-          <circle r="51.5" fill="none" stroke="var(--ok)" strokeWidth="4.5" />
+          <circle r="51.5" {...thin} stroke="var(--ok)" strokeWidth="2.5" />
         </g>
       );
   }
 }
 
 function Seam({ from, to }: { from: number; to: number }) {
-  return <path d={`M${from} 0H${to}`} stroke="var(--over)" strokeWidth="2" />;
+  return <path d={`M${from} 0H${to}`} {...thin} stroke="var(--over)" strokeWidth="1.3" />;
 }

@@ -13,7 +13,7 @@ export function BenchDrawing({ geometry }: { geometry: BenchGeometry }) {
         {orders.map((n) => (
           <path
             key={n}
-            d={`M372 ${63 + n * 0.8}L${end} ${61 + n * 12 - 3.5}v7z`}
+            d={`M372 ${63 + n * 1.1}L${end} ${63 + n * 13 - 3.5}v7z`}
             opacity={0.5 / Math.abs(n) ** 0.9}
           />
         ))}
@@ -23,7 +23,7 @@ export function BenchDrawing({ geometry }: { geometry: BenchGeometry }) {
             {orders.map((n) => (
               <path
                 key={n}
-                d={`M560 ${61 + n * 12 - 3.5}v7L1010 ${62 + n * 12}z`}
+                d={`M560 ${63 + n * 13 - 3.5}v7L1010 ${63 + n * 12}z`}
                 opacity={0.5 / Math.abs(n) ** 0.9}
               />
             ))}

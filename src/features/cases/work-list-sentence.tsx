@@ -29,34 +29,67 @@ export function WorkListSentence({ counts, found, show, onShow }: WorkListSenten
         <b>{capital(countWord(found))}</b> {found === 1 ? 'case' : 'cases'} found
       </>
     );
-  const phrase = (group: CaseGroup, words: string): ReactNode => (
-    <button
-      type="button"
-      className="phrase"
-      aria-pressed={show === group}
-      onClick={() => onShow(show === group ? null : group)}
-    >
-      {words}
-    </button>
-  );
   const waiting = counts.get('wait') ?? 0;
-  const rest = [...counts].filter(([group]) => group !== 'wait');
   return (
     <>
       {waiting === 0 ? (
         'No case waits for you'
       ) : (
         <>
-          {phrase('wait', `${capital(countWord(waiting))} ${waiting === 1 ? 'case' : 'cases'}`)}{' '}
+          <Phrase group="wait" show={show} onShow={onShow}>
+            {capital(countWord(waiting))} {waiting === 1 ? 'case' : 'cases'}
+          </Phrase>{' '}
           {ends.wait(waiting)}
         </>
       )}
-      {rest.map(([group, n]) => (
-        <span key={group}>
-          , {phrase(group, countWord(n))} {ends[group](n)}
-        </span>
-      ))}
+      {(['running', 'came-back', 'in-review'] as const).map((group) => {
+        const n = counts.get(group);
+        return n ? (
+          <span key={group}>
+            ,{' '}
+            <Phrase group={group} show={show} onShow={onShow}>
+              {countWord(n)}
+            </Phrase>{' '}
+            {ends[group](n)}
+          </span>
+        ) : null;
+      })}
     </>
+  );
+}
+
+/** The groups that nobody here has to act on, in the smaller line below. */
+export function WorkListRest({ counts, show, onShow }: Omit<WorkListSentenceProps, 'found'>) {
+  return (['others', 'closed'] as const).map((group) => {
+    const n = counts?.get(group);
+    return n ? (
+      <span key={group}>
+        {' '}
+        <Phrase group={group} show={show} onShow={onShow}>
+          {capital(countWord(n))}
+        </Phrase>{' '}
+        {ends[group](n)}.
+      </span>
+    ) : null;
+  });
+}
+
+interface PhraseProps extends Pick<WorkListSentenceProps, 'show' | 'onShow'> {
+  group: CaseGroup;
+  children: ReactNode;
+}
+
+function Phrase({ group, show, onShow, children }: PhraseProps) {
+  const pressed = show === group;
+  return (
+    <button
+      type="button"
+      className="phrase min-h-6"
+      aria-pressed={pressed}
+      onClick={() => onShow(pressed ? null : group)}
+    >
+      {children}
+    </button>
   );
 }
 

@@ -42,7 +42,7 @@ export function SignInPattern({ apart }: { apart: boolean }) {
       />
       <svg
         viewBox={`0 0 ${width} ${height}`}
-        className="absolute top-1/2 left-0 h-[max(100dvh,900px)] w-auto max-w-none -translate-y-1/2"
+        className="absolute top-1/2 left-0 h-[max(100dvh,900px)] w-auto max-w-none -translate-y-1/2 overflow-visible"
       >
         <clipPath id="model-half">
           <path d={`M${seamX(-200)}-200H1400V1100H${seamX(1100)}z`} />

@@ -1,5 +1,5 @@
 import { useRef, useState } from 'react';
-import { Link, NavLink, useNavigate } from 'react-router-dom';
+import { Link, useLocation, useNavigate } from 'react-router-dom';
 import { useKeys } from '#src/lib/keys.ts';
 import type { SignedInPerson } from '#src/lib/session.ts';
 import { chooseTheme, useTheme } from '#src/lib/theme.ts';
@@ -20,6 +20,11 @@ const places: readonly { to: string; label: string; needs: Permission; key?: str
   { to: '/audit', label: 'Audit trail', needs: 'read-audit' },
 ];
 
+/** Cases and exposures belong to the work list. */
+function isAt(place: string, pathname: string): boolean {
+  return place === '/' ? /^\/($|cases|exposures)/.test(pathname) : pathname.startsWith(place);
+}
+
 interface TopLineProps {
   person: SignedInPerson;
   /** What waits, by the address of its place. */
@@ -28,6 +33,7 @@ interface TopLineProps {
 
 export function TopLine({ person, counts }: TopLineProps) {
   const navigate = useNavigate();
+  const { pathname } = useLocation();
   const theme = useTheme();
   const wideFind = useRef<HTMLInputElement>(null);
   const narrowFind = useRef<HTMLInputElement>(null);
@@ -62,16 +68,16 @@ export function TopLine({ person, counts }: TopLineProps) {
         className="flex flex-wrap gap-x-6 max-md:order-last max-md:w-full max-md:gap-x-5"
       >
         {open.map((p) => (
-          <NavLink
+          <Link
             key={p.to}
             to={p.to}
-            end={p.to === '/'}
-            className={({ isActive }) =>
-              classNames(
-                'flex min-h-[51px] items-center gap-1.5 border-t-3 border-b-3 border-t-transparent font-[650] max-md:min-h-9',
-                isActive ? 'border-b-seam text-ink' : 'border-b-transparent text-ink2 hover:text-ink',
-              )
-            }
+            aria-current={isAt(p.to, pathname) ? 'page' : undefined}
+            className={classNames(
+              'flex min-h-[51px] items-center gap-1.5 border-t-3 border-b-3 border-t-transparent font-[650] max-md:min-h-9',
+              isAt(p.to, pathname)
+                ? 'border-b-seam text-ink'
+                : 'border-b-transparent text-ink2 hover:text-ink',
+            )}
           >
             {p.label}
             {counts[p.to] ? (
@@ -80,7 +86,7 @@ export function TopLine({ person, counts }: TopLineProps) {
                 <span className="sr-only"> waiting</span>
               </span>
             ) : null}
-          </NavLink>
+          </Link>
         ))}
       </nav>
       <div className="ml-auto flex items-center gap-5">
