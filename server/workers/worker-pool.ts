@@ -11,8 +11,10 @@ import type { Task } from '#server/workers/tasks.ts';
 const timeLimit = 5 * 60_000;
 
 /** The engine in worker threads. `file` is the bundled worker. */
-export function createWorkerPool(file: string): EnginePool {
-  const threads = Math.max(1, Math.min(4, availableParallelism()));
+export function createWorkerPool(
+  file: string,
+  threads = Math.max(1, Math.min(4, availableParallelism())),
+): EnginePool {
   const pool = new Piscina({
     filename: file,
     minThreads: 1,
