@@ -74,7 +74,7 @@ export function QuantityField(props: QuantityFieldProps) {
           </Half>
         ) : null}
       </div>
-      <FieldNote id={note} error={error ?? uError} hint={hint} />
+      <FieldNote id={note} error={[error, uError].filter(Boolean).join(' ') || undefined} hint={hint} />
     </div>
   );
 }

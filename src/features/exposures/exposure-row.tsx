@@ -65,8 +65,8 @@ export function ExposureRow({ exposure }: { exposure: Exposure }) {
               to={`/exposures/${exposure.id}`}
               className="pressable-link inline-flex min-h-6 items-center"
             >
-              {stage === 'running' ? 'Watch it' : 'Read the result'}
-              <span className="sr-only"> of exposure {exposure.number}</span>
+              {stage === 'running' ? 'Watch it' : 'Read the result'}{' '}
+              <span className="sr-only">of exposure {exposure.number}</span>
             </Link>
             {exposure.can.withdraw ? <WithdrawExposure exposure={exposure} /> : null}
           </p>

@@ -14,17 +14,19 @@ export function UploadRow({ item, onSendAgain, onLeaveOut }: UploadRowProps) {
   const { file, state, share, problem } = item;
   if (state === 'refused')
     return (
-      <li className="border-l-[3px] border-bad bg-bad-wash px-3 py-2.5" role="alert">
-        <p className="reading break-all">{file.name}</p>
-        <p className="mb-2">
-          <b className="text-bad">{problem?.title}.</b> {problem?.message}
-        </p>
+      <li className="border-l-[3px] border-bad bg-bad-wash px-3 py-2.5">
+        <div role="alert">
+          <p className="reading break-all">{file.name}</p>
+          <p className="mb-2">
+            <b className="text-bad">{problem?.title}.</b> {problem?.message}
+          </p>
+        </div>
         <div className="flex gap-3">
-          <Button small onClick={onSendAgain} aria-label={`Send ${file.name} again`}>
-            Send again
+          <Button small onClick={onSendAgain}>
+            Send again <span className="sr-only">{file.name}</span>
           </Button>
-          <Button small look="bare" onClick={onLeaveOut} aria-label={`Leave ${file.name} out`}>
-            Leave out
+          <Button small look="bare" onClick={onLeaveOut}>
+            Leave out <span className="sr-only">{file.name}</span>
           </Button>
         </div>
       </li>

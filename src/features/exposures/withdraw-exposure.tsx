@@ -14,7 +14,7 @@ export function WithdrawExposure({ exposure }: { exposure: Exposure }) {
   return (
     <>
       <button type="button" className="pressable-link min-h-6 text-bad" onClick={() => setOpen(true)}>
-        Withdraw<span className="sr-only"> exposure {exposure.number}</span>
+        Withdraw <span className="sr-only">exposure {exposure.number}</span>
       </button>
       {open ? <Ask exposure={exposure} onClose={() => setOpen(false)} /> : null}
     </>
@@ -51,9 +51,7 @@ function Ask({ exposure, onClose }: { exposure: Exposure; onClose: () => void })
           <Button type="submit" look="danger" busy={busy && 'Withdrawing'}>
             Withdraw
           </Button>
-          <Button autoFocus onClick={onClose}>
-            Keep it
-          </Button>
+          <Button onClick={onClose}>Keep it</Button>
         </div>
       </form>
     </Dialog>

@@ -23,7 +23,7 @@ export function FindBox({ ref }: { ref: Ref<HTMLInputElement> }) {
       <input
         ref={ref}
         type="search"
-        aria-label="Find a case, part or lot"
+        aria-label="Find a case"
         placeholder="Case, part or lot"
         value={text.typed}
         maxLength={100}

@@ -82,8 +82,7 @@ export function TopLine({ person, counts }: TopLineProps) {
             {p.label}
             {counts[p.to] ? (
               <span className="font-[740] text-seam">
-                {counts[p.to]}
-                <span className="sr-only"> waiting</span>
+                {counts[p.to]} <span className="sr-only">waiting</span>
               </span>
             ) : null}
           </Link>
@@ -96,7 +95,7 @@ export function TopLine({ person, counts }: TopLineProps) {
         <button
           type="button"
           className="flex size-[34px] items-center justify-center rounded-full border border-edge lg:hidden"
-          aria-label="Find a case, part or lot"
+          aria-label="Find a case"
           aria-expanded={finding}
           onClick={() => (finding ? setFinding(false) : startFinding())}
         >
