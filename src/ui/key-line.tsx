@@ -17,7 +17,7 @@ export function KeyLine() {
         {applies.map((k) => (
           <li key={k.keys} className="label flex h-[33px] items-center gap-1.5 text-ink2">
             <KeyCap keys={k.keys} />
-            <span className="sr-only">{k.keys}:</span>
+            <span className="sr-only">{k.keys}: </span>
             {k.label}
           </li>
         ))}
