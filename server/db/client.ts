@@ -25,7 +25,7 @@ export function connectServer(url: string): DatabaseClient {
 /** The embedded database, on disk or (without a folder) in memory. */
 export async function connectEmbedded(folder?: string): Promise<DatabaseClient> {
   const lite = folder === undefined ? await PGlite.create() : await openFolder(folder);
-  const pool = new pg.Pool(createPgConfig(lite) as unknown as pg.PoolConfig);
+  const pool = new pg.Pool(withoutTypeParsers(createPgConfig(lite)) as unknown as pg.PoolConfig);
   pool.on('error', () => undefined);
   return {
     db: drizzle(pool),
@@ -35,6 +35,17 @@ export async function connectEmbedded(folder?: string): Promise<DatabaseClient> 
       await lite.close();
     },
   };
+}
+
+/**
+ * Drizzle gives every query its type parsers as `types`; pg hands them on to the connection's `parse`, where the embedded
+ * database expects a list of type ids and breaks in the middle of a message: every query with parameters would fail.
+ */
+function withoutTypeParsers(config: ReturnType<typeof createPgConfig>) {
+  const connection = config.connection as unknown as { parse(query: { types?: unknown }): void };
+  const parse = connection.parse.bind(connection);
+  connection.parse = (query) => parse(Array.isArray(query.types) ? query : { ...query, types: undefined });
+  return config;
 }
 
 /**
