@@ -15,20 +15,38 @@ import { Table, type Column } from '#src/ui/table.tsx';
 import { listAudit, type AuditEvent } from '#shared/contracts/audit.ts';
 
 const columns: readonly Column<AuditEvent>[] = [
-  { key: 'at', head: 'When', cell: (e) => <time dateTime={e.at}>{printExactTime(e.at)}</time> },
-  { key: 'by', head: 'Who', cell: (e) => e.by?.name ?? 'the server' },
+  {
+    key: 'at',
+    head: 'When',
+    cell: (e) => (
+      <time dateTime={e.at} className="whitespace-nowrap">
+        {printExactTime(e.at)}
+      </time>
+    ),
+  },
+  {
+    key: 'by',
+    head: 'Who',
+    cell: (e) => <span className="whitespace-nowrap">{e.by?.name ?? 'the server'}</span>,
+  },
   { key: 'event', head: 'What', cell: (e) => e.event.replaceAll('-', ' ') },
   { key: 'subject', head: 'On', cell: (e) => e.subject },
   {
     key: 'detail',
-    head: 'Detail',
+    head: 'Detail, quantities in SI units',
     cell: (e) => <span className="break-words text-ink2">{detailText(e.detail)}</span>,
   },
 ];
 
+function plain(value: unknown): string {
+  if (typeof value === 'string') return value;
+  return Array.isArray(value) ? value.map(plain).join(', ') : JSON.stringify(value);
+}
+
+/** What the record holds, as it is: quantities in SI units. */
 function detailText(detail: Record<string, unknown>): string {
   return Object.entries(detail)
-    .map(([key, value]) => `${key}: ${typeof value === 'string' ? value : JSON.stringify(value)}`)
+    .map(([key, value]) => `${key}: ${plain(value)}`)
     .join('; ');
 }
 

@@ -82,10 +82,10 @@ function Overlay({ stage, progress }: { stage: CaseStage; progress: number }) {
   switch (stage) {
     case 'no-exposure':
       return (
-        <g {...hair} strokeDasharray="4 5">
-          <circle r="48" />
-          <path d="M-34 34 34-34" />
-        </g>
+        <>
+          <circle r="48" {...hair} strokeDasharray="3 4" />
+          <path d="M-34 34 34-34" {...hair} strokeDasharray="3 4" />
+        </>
       );
     case 'running':
       return (
@@ -105,14 +105,14 @@ function Overlay({ stage, progress }: { stage: CaseStage; progress: number }) {
       return (
         <g transform={turned}>
           <path d="M-48 0H48" {...hair} />
-          <path d="M48 0A48 48 0 0 1-48 0" {...hair} strokeDasharray="4 5" />
+          <path d="M48 0A48 48 0 0 1-48 0" {...hair} strokeDasharray="3 4" />
         </g>
       );
     case 'unidentified':
       return (
         <g transform={turned}>
           <path d="M-48 0H48" {...hair} />
-          <path d="M48 0A48 48 0 0 1-48 0" {...hair} strokeDasharray="4 5" />
+          <path d="M48 0A48 48 0 0 1-48 0" {...hair} strokeDasharray="3 4" />
           <g stroke="var(--bad)" strokeWidth="1.8">
             <path d="M-36 6-28 30M-20 6-8 41M-3 6 9 41M14 6 24 36M31 6 36 24" />
           </g>

@@ -75,7 +75,10 @@ export function CaseLedger({ title, note, rows, current, onCurrent }: CaseLedger
 
 /** "Spray-orifice plate, lot 7, A3" */
 export function placeOf(row: Pick<CaseRow, 'title' | 'part' | 'lot' | 'specimen'>): string {
-  return [row.part, row.lot && `lot ${row.lot}`, row.specimen].filter(Boolean).join(', ') || row.title;
+  return (
+    [row.part, /^\d/.test(row.lot) ? `lot ${row.lot}` : row.lot, row.specimen].filter(Boolean).join(', ') ||
+    row.title
+  );
 }
 
 function RowResult({ row }: { row: CaseRow }) {

@@ -66,8 +66,15 @@ export function ReferenceDisc({ reference, span, size = 84 }: ReferenceDiscProps
 
 function paint(context: CanvasRenderingContext2D, aperture: Reference['aperture'], theme: Theme): void {
   const family = familyOf(aperture.family);
-  const model = family.models[0];
-  const fitted = model.fromFamily(aperture.values);
+  const open = family.parameters.some(
+    (p) => aperture.values[p.key] === null || aperture.values[p.key] === undefined,
+  );
+  const model = (open ? family.models.at(-1) : undefined) ?? family.models[0];
+  const sizes = new Set(family.parameters.map((p) => p.key));
+  // What is no size of the opening is the beam on it: drawn a few openings wide, so that the fringes have a height.
+  const fitted = model
+    .fromFamily(aperture.values)
+    .map((value, i) => (sizes.has(model.keys[i]) ? value : 3 * family.extent(aperture.values)));
   const step = (2 * spacings) / family.extent(aperture.values) / side;
   const [u, v, row] = [new Float64Array(side), new Float64Array(side), new Float64Array(side)];
   const map = colourMapOf(theme);

@@ -7,8 +7,8 @@ import { normalFrom, seededRandom } from '#shared/physics/random.ts';
 /** The opening behind the picture: an ellipse of 150 by 104 µm, long axis at 118°, at 632.8 nm and 250 mm. */
 const opening = { major: 150e-6, minor: 104e-6 };
 const turn = (118 * Math.PI) / 180;
-/** λL over the width of one picture unit (CSS pixel): the scale of the drawing, 9 µm on the sensor. */
-const frequencyPerPixel = 9e-6 / (632.8e-9 * 0.25);
+/** λL over the width of one picture unit (CSS pixel): the scale of the drawing, 18 µm on the sensor. */
+const frequencyPerPixel = 18e-6 / (632.8e-9 * 0.25);
 /** Zeros of J1 over π: radii of the dark fringes in units of 1/size (Abramowitz & Stegun, table 9.5). */
 const darkRings = [3.83171, 7.01559, 10.17347, 13.32369, 16.47063].map((zero) => zero / Math.PI);
 
