@@ -1,6 +1,7 @@
 import { logPolar } from '#server/engine/log-polar.ts';
+import { isCount } from '#server/engine/trial.ts';
 import { families } from '#shared/apertures/registry.ts';
-import type { FarFieldModel } from '#shared/apertures/family.ts';
+import type { ApertureFamily, FarFieldModel } from '#shared/apertures/family.ts';
 import { fft2InPlace } from '#shared/physics/fft.ts';
 
 /** A unit shape's log-polar pattern: its transform and that of its square. Row t holds ln ρ = (t − origin)·step. */
@@ -8,6 +9,8 @@ export interface Template {
   readonly family: string;
   readonly model: FarFieldModel;
   readonly values: readonly number[];
+  /** Which of the values are whole numbers, which do not scale. */
+  readonly counts: readonly boolean[];
   readonly re: Float64Array;
   readonly im: Float64Array;
   readonly squareRe: Float64Array;
@@ -28,12 +31,12 @@ export function unitAtlas(): readonly Template[] {
     family.unitShapes.map((shape) => {
       const model = family.models.find((m) => m.id === shape.model);
       if (!model) throw new Error(`${family.id} has no model ${shape.model}`);
-      return buildTemplate(family.id, model, shape.values);
+      return buildTemplate(family, model, shape.values);
     }),
   ));
 }
 
-function buildTemplate(family: string, model: FarFieldModel, values: readonly number[]): Template {
+function buildTemplate(family: ApertureFamily, model: FarFieldModel, values: readonly number[]): Template {
   const { angles, rows, step } = logPolar;
   const n = subsamples * subsamples;
   const u = new Float64Array(n * angles);
@@ -69,5 +72,6 @@ function buildTemplate(family: string, model: FarFieldModel, values: readonly nu
   const squareIm = new Float64Array(rows * angles);
   fft2InPlace(re, im, rows, angles, 'forward');
   fft2InPlace(squareRe, squareIm, rows, angles, 'forward');
-  return { family, model, values, re, im, squareRe, squareIm };
+  const counts = model.keys.map((key) => isCount(family, key));
+  return { family: family.id, model, values, counts, re, im, squareRe, squareIm };
 }

@@ -20,7 +20,52 @@ export function findCenters(frame: Frame, count: number): CenterHypothesis[] {
   const binned = binFrame(frame, bin, undefined, true);
   const values = compress(binned, frame.noise.a, frame.noise.b);
   const peaks = symmetryPeaks(binned, values, count);
-  return peaks.map((p) => refine(frame, p, bin));
+  if (peaks.length > 0) return peaks.map((p) => refine(frame, p, bin));
+  const spot = brightSpot(binned, frame.noise.a);
+  return spot ? [spot] : [];
+}
+
+/**
+ * Where else the centre may be when the best symmetry was a side lobe or a crop: the middle of the brightest light, and
+ * places just outside the borders that the light is nearest to.
+ */
+export function otherCenters(frame: Frame): { x: number; y: number }[] {
+  const bin = Math.max(1, Math.ceil(Math.max(frame.width, frame.height) / 128));
+  const spot = brightSpot(binFrame(frame, bin, undefined, true), frame.noise.a);
+  if (!spot) return [];
+  const { width, height } = frame;
+  const borders = [
+    { depth: spot.x / width, at: (d: number) => ({ x: -d * width, y: spot.y }) },
+    { depth: 1 - spot.x / width, at: (d: number) => ({ x: (1 + d) * width, y: spot.y }) },
+    { depth: spot.y / height, at: (d: number) => ({ x: spot.x, y: -d * height }) },
+    { depth: 1 - spot.y / height, at: (d: number) => ({ x: spot.x, y: (1 + d) * height }) },
+  ];
+  const near = borders.filter((b) => b.depth < 0.12);
+  return [spot, ...near.flatMap((b) => [0.02, 0.05, 0.09].map(b.at))];
+}
+
+/** Whether anything in the picture stands out of its noise. */
+export function hasLight(frame: Frame): boolean {
+  const bin = Math.max(1, Math.ceil(Math.max(frame.width, frame.height) / 128));
+  return brightSpot(binFrame(frame, bin, undefined, true), frame.noise.a) !== null;
+}
+
+/** Middle of the brightest bins, saturated ones included; null where nothing stands out of the noise. */
+function brightSpot(binned: Binned, floor: number): CenterHypothesis | null {
+  const { width, data, weight, bin } = binned;
+  let top = 0;
+  for (let k = 0; k < data.length; k++) if (weight[k] > 0.3 && data[k] > top) top = data[k];
+  if (top < (6 * Math.sqrt(floor)) / bin) return null;
+  let x = 0;
+  let y = 0;
+  let n = 0;
+  for (let k = 0; k < data.length; k++)
+    if (weight[k] > 0.3 && data[k] > 0.7 * top) {
+      x += k % width;
+      y += Math.floor(k / width);
+      n += 1;
+    }
+  return { x: (x / n + 0.5) * bin - 0.5, y: (y / n + 0.5) * bin - 0.5, score: 0.05 };
 }
 
 /** log(1 + z/3) of the variance-stabilised intensity z. */

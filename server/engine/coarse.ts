@@ -58,7 +58,7 @@ export function coarseSearch(map: LogPolarMap, frequencyPerPixel: number): Coars
       return {
         family: template.family,
         model: template.model,
-        values: template.values.map((value) => value * size),
+        values: template.values.map((value, i) => (template.counts[i] ? value : value * size)),
         orientation: ((turn % Math.PI) + Math.PI) % Math.PI,
         score: peak.score,
       };

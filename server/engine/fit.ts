@@ -34,7 +34,8 @@ function clampInPlace(p: Parameters, bin: number): void {
   const least = -(bin * bin) / 14;
   if (p[slot.blur] < least) p[slot.blur] = least;
   if (p[slot.blur] > 400) p[slot.blur] = 400;
-  for (let i = slot.sizes; i < p.length; i++) p[i] = Math.max(-20, Math.min(-2, p[i]));
+  // Counts of slits are above 1, lengths in metres below: only lengths are bounded.
+  for (let i = slot.sizes; i < p.length; i++) if (p[i] < 0) p[i] = Math.max(-20, Math.min(-2, p[i]));
 }
 
 /** A work space for one set of pixels: residuals and derivatives, reused between fits. */

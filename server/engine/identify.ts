@@ -1,4 +1,4 @@
-import { findCenters } from '#server/engine/center.ts';
+import { findCenters, otherCenters } from '#server/engine/center.ts';
 import type { Frame } from '#server/engine/frame.ts';
 import { judge, type Judgement } from '#server/engine/judge.ts';
 import type {
@@ -9,12 +9,13 @@ import type {
   Progress,
   Setup,
   Untold,
+  UnusableReason,
 } from '#server/engine/outcome.ts';
 import { prepare } from '#server/engine/prepare.ts';
 import { rankTrials, type Ranking } from '#server/engine/rank.ts';
-import { searchAbout } from '#server/engine/search.ts';
-import type { Bench } from '#server/engine/trial.ts';
-import { candidateOf } from '#server/engine/uncertainty.ts';
+import { coarseScoreAbout, searchAbout } from '#server/engine/search.ts';
+import { sizesOf, type Bench } from '#server/engine/trial.ts';
+import { candidateOf, centerUncertainty, smallestMeasurable } from '#server/engine/uncertainty.ts';
 import { factsOf, unusableReasons } from '#server/engine/inspect.ts';
 import { familyOf } from '#shared/apertures/registry.ts';
 import { seededRandom } from '#shared/physics/random.ts';
@@ -68,14 +69,18 @@ export function identify(picture: Picture, setup: Setup, options: IdentifyOption
   };
   let best = examine(bench, centers[0], (step, share) => tell(step, 0.12 + 0.6 * share));
   // A misfit may be a wrong centre: the other hypotheses get their chance before anything is called unknown.
-  const others =
-    best && best.judgement.verdict !== 'unidentified' ? [] : [...centers.slice(1), ...brightCenters(frame)];
-  others.forEach((center, i) => {
-    const share = (s: number) => 0.72 + (0.24 * (i + s)) / others.length;
-    const rival = examine(bench, center, (step, s) => tell(`${step}, centre tried anew`, share(s)));
-    if (rival && (!best || rival.judgement.misfit < best.judgement.misfit)) best = rival;
-  });
+  if (!best || best.judgement.verdict === 'unidentified') {
+    tell('Trying other centres', 0.72);
+    const rivals = promisingCenters(bench, [...centers.slice(1), ...otherCenters(frame)], best);
+    rivals.forEach((center, i) => {
+      const share = (s: number) => 0.76 + (0.2 * (i + s)) / rivals.length;
+      const rival = examine(bench, center, (step, s) => tell(`${step}, another centre`, share(s)));
+      if (rival && (!best || rival.judgement.misfit < best.judgement.misfit)) best = rival;
+    });
+  }
   if (!best) return { kind: 'unusable', reasons: ['no-center'], picture: facts };
+  const unresolved = unresolvedReason(bench, best);
+  if (unresolved) return { kind: 'unusable', reasons: [unresolved], picture: facts };
   tell('Working out the uncertainties', 0.97);
   const outcome = answer(best, setup, frame);
   tell('Done', 1);
@@ -85,6 +90,8 @@ export function identify(picture: Picture, setup: Setup, options: IdentifyOption
 interface Examined {
   readonly ranking: Ranking;
   readonly judgement: Judgement;
+  readonly center: { readonly x: number; readonly y: number };
+  readonly coarseScore: number;
 }
 
 function examine(
@@ -96,24 +103,37 @@ function examine(
   const found = searchAbout(bench, center, random, (step, share) => onStep(step, 0.6 * share));
   if (!found || found.trials.length === 0) return null;
   const ranking = rankTrials(bench, found.trials, random, (step, share) => onStep(step, 0.6 + 0.4 * share));
-  return { ranking, judgement: judge(ranking) };
+  return { ranking, judgement: judge(ranking), center, coarseScore: found.coarseScore };
 }
 
-/** Middle of the brightest pixels, saturated ones included: where a symmetry search was led astray by a crop. */
-function brightCenters(frame: Frame): { x: number; y: number }[] {
-  const { data, width, mask } = frame;
-  let top = 0;
-  for (let k = 0; k < data.length; k++) if (mask[k] <= 2 && data[k] > top) top = data[k];
-  let x = 0;
-  let y = 0;
-  let n = 0;
-  for (let k = 0; k < data.length; k++)
-    if (mask[k] <= 2 && data[k] > 0.7 * top) {
-      x += k % width;
-      y += Math.floor(k / width);
-      n += 1;
-    }
-  return n > 0 ? [{ x: x / n, y: y / n }] : [];
+/** Fringes too fine for the pixels, or too coarse for the frame, whichever shape they belong to. */
+function unresolvedReason({ geometry }: Bench, { ranking, judgement }: Examined): UnusableReason | null {
+  const best = judgement.ranked[0].finalist;
+  const extent = best.family.extent(best.model.toFamily(sizesOf(best)));
+  const period = pixelsPerFringe(extent, geometry.wavelength, geometry.distance, geometry.pixelPitch);
+  if (period < pixelsPerFringeLimit) return 'fringes-undersampled';
+  return extent < smallestMeasurable(ranking, best) ? 'no-minimum-in-frame' : null;
+}
+
+/** At most two other centres that the atlas likes about as much as the one already tried. */
+function promisingCenters(
+  bench: Bench,
+  proposals: readonly { x: number; y: number }[],
+  tried: Examined | null,
+): { x: number; y: number }[] {
+  const least = tried ? tried.coarseScore - 0.04 : -1;
+  const known = tried ? [tried.center] : [];
+  return proposals
+    .map((center) => ({ center, score: coarseScoreAbout(bench, center) }))
+    .filter(({ score }) => score > least)
+    .sort((p, q) => q.score - p.score)
+    .map(({ center }) => center)
+    .filter((center) => {
+      if (known.some((k) => Math.hypot(k.x - center.x, k.y - center.y) < 4)) return false;
+      known.push(center);
+      return true;
+    })
+    .slice(0, 2);
 }
 
 function answer({ ranking, judgement }: Examined, setup: Setup, frame: Frame): Outcome {
@@ -129,7 +149,10 @@ function answer({ ranking, judgement }: Examined, setup: Setup, frame: Frame): O
     untold: untoldBy(candidates, farField, setup),
     farField,
     picture: {
-      ...factsOf(frame, { ...best.fit.center, score: 1 }),
+      ...factsOf(frame, {
+        ...best.fit.center,
+        u: centerUncertainty(ranking, judgement.ranked[0].finalist),
+      }),
       noise: ranking.bench.frame.noise,
     },
   };
@@ -158,13 +181,6 @@ function untoldBy(candidates: readonly Candidate[], farField: FarFieldFinding, s
     untold.push('unresolved-length');
   if (Object.values(best.dimensions).some((d) => d.bound !== null)) untold.push('bounded-dimension');
   if (!farField.holds) untold.push('near-field');
-  const period = pixelsPerFringe(
-    family.extent(best.values),
-    setup.wavelength.value,
-    setup.distance.value,
-    setup.pixelPitch.value,
-  );
-  if (period < pixelsPerFringeLimit) untold.push('undersampled');
   if (setup.encoding === 'srgb') untold.push('unknown-response');
   return untold;
 }

@@ -15,8 +15,11 @@ export function estimateNoise(
   background: number,
   floor: number,
 ): NoiseLaw {
-  const samples: { mean: number; d: number }[] = [];
-  const stride = Math.max(1, Math.floor(Math.sqrt((width * height) / 160_000)));
+  const stride = Math.max(1, Math.floor(Math.sqrt((width * height) / 120_000)));
+  const room = Math.ceil(width / stride) * Math.ceil(height / stride);
+  const means = new Float64Array(room);
+  const differences = new Float64Array(room);
+  let n = 0;
   for (let y = 0; y + 1 < height; y += stride)
     for (let x = 0; x + 1 < width; x += stride) {
       const k = y * width + x;
@@ -25,12 +28,14 @@ export function estimateNoise(
       const b = data[k + 1];
       const c = data[k + width];
       const e = data[k + width + 1];
-      samples.push({ mean: (a + b + c + e) / 4 - background, d: (a - b - c + e) / 2 });
+      means[n] = (a + b + c + e) / 4 - background;
+      differences[n] = (a - b - c + e) / 2;
+      n += 1;
     }
   return lawFromResiduals(
-    samples.length,
-    (i) => samples[i].mean,
-    (i) => samples[i].d,
+    n,
+    (i) => means[i],
+    (i) => differences[i],
     floor,
   );
 }

@@ -86,6 +86,8 @@ function maskHotPixels(
     for (let x = 1; x + 1 < width; x++) {
       const k = y * width + x;
       const here = data[k];
+      if (here <= data[k - 1] || here <= data[k + 1] || here <= data[k - width] || here <= data[k + width])
+        continue;
       const above = Math.max(
         data[k - width - 1],
         data[k - width],

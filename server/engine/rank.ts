@@ -3,7 +3,7 @@ import { varianceAt, type Frame, type NoiseLaw } from '#server/engine/frame.ts';
 import { lawFromResiduals } from '#server/engine/noise.ts';
 import { slot } from '#server/engine/pattern.ts';
 import { allBins, pick, type PixelSet } from '#server/engine/pixel-set.ts';
-import { binFor, canonical, kinStarts } from '#server/engine/search.ts';
+import { binFor, canonical, keyOf, kinStarts } from '#server/engine/search.ts';
 import { fitterFor, fitTrial, freeOf, sizesOf, type Bench, type Trial } from '#server/engine/trial.ts';
 
 /** A finalist: fitted to the same pixels with the same weights as all other finalists. */
@@ -64,7 +64,7 @@ export function rankTrials(
 /** Every finalist's simpler and richer neighbours get a start from its solution, so that nested shapes lose only on merit. */
 function withKin(bench: Bench, fitted: readonly Trial[], set: PixelSet): Trial[] {
   const leader = fitted[0];
-  const best = new Map(fitted.map((t) => [`${t.family.id} ${t.model.id}`, t]));
+  const best = new Map(fitted.map((t) => [keyOf(t), t]));
   for (const start of kinStarts(bench, leader, {
     x: leader.parameters[slot.x],
     y: leader.parameters[slot.y],
@@ -72,7 +72,7 @@ function withKin(bench: Bench, fitted: readonly Trial[], set: PixelSet): Trial[]
     start.parameters[slot.amplitude] = leader.parameters[slot.amplitude];
     const options = { ...middle, free: freeOf(start, { slopes: true }) };
     const trial = canonical(fitTrial(bench, start, set, options).trial);
-    const key = `${trial.family.id} ${trial.model.id}`;
+    const key = keyOf(trial);
     const other = best.get(key);
     if (!other || trial.cost < other.cost) best.set(key, trial);
   }

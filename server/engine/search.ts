@@ -17,6 +17,8 @@ import { pixelsPerFringe } from '#shared/physics/sampling.ts';
 const perFamily = 3;
 const seedCount = 16;
 const samplesPerFringe = 8;
+/** A start whose near fit costs more than this many times the best one's is given up. */
+const hopelessRatio = 5;
 
 /** Screening tolerates 8 % of what the model leaves out and gives up early. */
 const screening = { residuals: 'stabilised', maxSteps: 14, huber: 4, texture: 0.0064 } as const;
@@ -29,9 +31,8 @@ export function searchAbout(
   onStep: (step: string, share: number) => void,
 ): { trials: Trial[]; set: PixelSet; coarseScore: number } | null {
   const { geometry, frame } = bench;
-  const frequencyPerPixel = geometry.pixelPitch / (geometry.wavelength * geometry.distance);
   onStep('Comparing with the atlas', 0);
-  const coarse = coarseSearch(logPolarMap(frame, center), frequencyPerPixel);
+  const coarse = coarseSearch(logPolarMap(frame, center), frequencyPerPixel(bench));
   if (coarse.length === 0) return null;
   const seeds = chooseSeeds(coarse);
   const extent = Math.min(...seeds.slice(0, 4).map(extentOf));
@@ -39,22 +40,25 @@ export function searchAbout(
   const bin = binFor(bench, extent * 1.3);
   const all = screeningSet(bench, bin, center, Number.POSITIVE_INFINITY, random);
   const near = screeningSet(bench, bin, center, 8 * period, random);
-  const best = new Map<string, Trial>();
-  const keep = (trial: Trial) => {
-    const key = `${trial.family.id} ${trial.model.id}`;
-    const other = best.get(key);
-    if (!other || trial.cost < other.cost) best.set(key, trial);
-  };
+  const run = new Screening(bench, near, all);
   seeds.forEach((seed, i) => {
     const family = familyOf(seed.family);
     onStep(`Comparing with ${family.label.toLowerCase()}`, 0.15 + (0.55 * i) / seeds.length);
-    const start = startTrial(bench, family, seed.model, seed.values, seed.orientation, center);
-    keep(screen(bench, start, near, all));
+    run.try(startTrial(bench, family, seed.model, seed.values, seed.orientation, center));
   });
   onStep('Comparing with neighbouring shapes', 0.7);
-  for (let round = 0; round < 2; round++) expandKin(bench, [...best.values()], center, near, all, keep);
-  const trials = [...best.values()].sort((p, q) => p.cost - q.cost);
-  return { trials, set: all, coarseScore: coarse[0].score };
+  const expanded = new Set<Trial>();
+  for (let round = 0; round < 2; round++) expandKin(run, center, expanded);
+  return { trials: run.ranked(), set: all, coarseScore: coarse[0].score };
+}
+
+/** How well the atlas likes a centre: the best correlation of any unit pattern. */
+export function coarseScoreAbout(bench: Bench, center: { x: number; y: number }): number {
+  return coarseSearch(logPolarMap(bench.frame, center), frequencyPerPixel(bench))[0]?.score ?? -1;
+}
+
+function frequencyPerPixel({ geometry }: Bench): number {
+  return geometry.pixelPitch / (geometry.wavelength * geometry.distance);
 }
 
 function chooseSeeds(coarse: readonly CoarseCandidate[]): CoarseCandidate[] {
@@ -98,29 +102,50 @@ function screeningSet(
   );
 }
 
-function screen(bench: Bench, start: Trial, near: PixelSet, all: PixelSet): Trial {
-  const lit = withAmplitude(bench, start, near);
-  const free = freeOf(lit);
-  const first = fitTrial(bench, lit, near, { ...screening, free, maxSteps: 8 });
-  return canonical(fitTrial(bench, first.trial, all, { ...screening, free }).trial);
+/** Near fringes first, then all of them; a start that is hopeless near the centre is not carried on. */
+class Screening {
+  #least = Number.POSITIVE_INFINITY;
+  readonly best = new Map<string, Trial>();
+
+  constructor(
+    readonly bench: Bench,
+    readonly near: PixelSet,
+    readonly all: PixelSet,
+  ) {}
+
+  try(start: Trial): void {
+    const lit = withAmplitude(this.bench, start, this.near);
+    const free = freeOf(lit);
+    const first = fitTrial(this.bench, lit, this.near, { ...screening, free, maxSteps: 8 }).trial;
+    if (first.cost > hopelessRatio * this.#least + 1) return;
+    this.#least = Math.min(this.#least, first.cost);
+    const trial = canonical(fitTrial(this.bench, first, this.all, { ...screening, free }).trial);
+    const key = keyOf(trial);
+    const other = this.best.get(key);
+    if (!other || trial.cost < other.cost) this.best.set(key, trial);
+  }
+
+  ranked(): Trial[] {
+    return [...this.best.values()].sort((p, q) => p.cost - q.cost);
+  }
 }
 
-/** Neighbours of the leading trials, started from the leaders' own solutions. */
-function expandKin(
-  bench: Bench,
-  trials: Trial[],
-  center: { x: number; y: number },
-  near: PixelSet,
-  all: PixelSet,
-  keep: (trial: Trial) => void,
-): void {
-  const leaders = trials.sort((p, q) => p.cost - q.cost).slice(0, 3);
-  for (const leader of leaders)
-    for (const start of kinStarts(bench, leader, center)) {
-      const rival = trials.find((t) => t.family === start.family && t.model === start.model);
+/** Names a family's model: one trial of each is kept. */
+export function keyOf({ family, model }: Pick<Trial, 'family' | 'model'>): string {
+  return `${family.id} ${model.id}`;
+}
+
+/** Neighbours of the leading trials, started from the leaders' own solutions; each solution is expanded once. */
+function expandKin(run: Screening, center: { x: number; y: number }, expanded: Set<Trial>): void {
+  for (const leader of run.ranked().slice(0, 3)) {
+    if (expanded.has(leader)) continue;
+    expanded.add(leader);
+    for (const start of kinStarts(run.bench, leader, center)) {
+      const rival = run.best.get(keyOf(start));
       if (rival && rival.cost < leader.cost * 1.02) continue;
-      keep(screen(bench, start, near, all));
+      run.try(start);
     }
+  }
 }
 
 /** A trial for each kin of a solution, at the kin's start values. */

@@ -26,13 +26,20 @@ export function sizesOf(trial: Trial): number[] {
   return Array.from(trial.parameters.subarray(slot.sizes), Math.exp);
 }
 
+/** Whole numbers are compared, never fitted or scaled. */
+export function isCount(family: ApertureFamily, key: string): boolean {
+  return family.parameters.some((p) => p.key === key && p.kind === 'count');
+}
+
 /** Numbers free in a fit: centre, sizes, amplitude and offset always; the others when asked for. */
 export function freeOf(trial: Trial, extras: { slopes?: boolean; blur?: boolean } = {}): number[] {
   const free: number[] = [slot.amplitude, slot.x, slot.y, slot.offset];
   if (trial.family.rotationPeriod !== null) free.push(slot.turn);
   if (extras.slopes) free.push(slot.slopeX, slot.slopeY);
   if (extras.blur) free.push(slot.blur);
-  trial.model.keys.forEach((_, i) => free.push(slot.sizes + i));
+  trial.model.keys.forEach((key, i) => {
+    if (!isCount(trial.family, key)) free.push(slot.sizes + i);
+  });
   return free;
 }
 

@@ -1,12 +1,34 @@
 import type { Candidate, CandidateDimension, Measured, Setup } from '#server/engine/outcome.ts';
 import { slot } from '#server/engine/pattern.ts';
 import type { Finalist, Ranking } from '#server/engine/rank.ts';
-import { fitterFor, sizesOf } from '#server/engine/trial.ts';
+import { fitterFor, sizesOf, type Trial } from '#server/engine/trial.ts';
 
 /** Relative standard uncertainty of λL/p: the scale of every size (JCGM 100, 5.1.6, product of powers). */
 export function scaleUncertainty(setup: Setup): number {
   const relative = (q: Measured) => q.u / q.value;
   return Math.hypot(relative(setup.wavelength), relative(setup.distance), relative(setup.pixelPitch));
+}
+
+/** Standard uncertainty from image noise of each free number of a finalist, in the units of its parameters. */
+function imageUncertainty(ranking: Ranking, finalist: Finalist): (which: number) => number {
+  const { parameters, free } = finalist;
+  const covariance = fitterFor(ranking.bench, finalist, ranking.set).covariance(parameters, {
+    ...ranking.options,
+    free,
+  });
+  const inflation = Math.max(1, finalist.cost);
+  return (which) => {
+    const f = free.indexOf(which);
+    return covariance && f >= 0 ? Math.sqrt(Math.max(covariance[f * free.length + f], 0) * inflation) : 0;
+  };
+}
+
+/** The largest size, in metres, whose first minimum would lie outside the frame: sizes below it are only bounded. */
+export function smallestMeasurable({ bench }: Ranking, { parameters }: Trial): number {
+  const { frame, geometry } = bench;
+  const dx = Math.max(parameters[slot.x], frame.width - 1 - parameters[slot.x]);
+  const dy = Math.max(parameters[slot.y], frame.height - 1 - parameters[slot.y]);
+  return (geometry.wavelength * geometry.distance) / (Math.hypot(dx, dy) * geometry.pixelPitch);
 }
 
 /** A finalist as it leaves the engine: sizes with both parts of their uncertainty, direction in [0, period). */
@@ -16,30 +38,34 @@ export function candidateOf(
   probability: number,
   setup: Setup,
 ): Candidate {
-  const { family, model, parameters, free } = finalist;
+  const { family, model, parameters } = finalist;
   const sizes = sizesOf(finalist);
-  const values = model.toFamily(sizes);
-  const covariance = fitterFor(ranking.bench, finalist, ranking.set).covariance(parameters, {
-    ...ranking.options,
-    free,
-  });
-  const inflation = Math.max(1, finalist.cost);
-  const sigma = (which: number): number => {
-    const f = free.indexOf(which);
-    return covariance && f >= 0 ? Math.sqrt(Math.max(covariance[f * free.length + f], 0) * inflation) : 0;
-  };
+  const values: Record<string, number | null> = { ...model.toFamily(sizes) };
+  const sigma = imageUncertainty(ranking, finalist);
   const scale = scaleUncertainty(setup);
+  const least = smallestMeasurable(ranking, finalist);
   const dimensions: Record<string, CandidateDimension> = {};
-  for (const parameter of family.parameters) {
-    const i = model.keys.indexOf(parameter.key);
-    const value = values[parameter.key] ?? null;
+  for (const { key, kind } of family.parameters) {
+    const i = model.keys.indexOf(key);
+    const value = values[key] ?? null;
     if (i < 0 || value === null) {
-      dimensions[parameter.key] = { value: null, uImage: 0, uSetup: 0, u: 0, bound: null };
+      dimensions[key] = { value: null, uImage: 0, uSetup: 0, u: 0, bound: null };
+      continue;
+    }
+    if (kind === 'length' && value < least) {
+      values[key] = least;
+      dimensions[key] = {
+        value: least,
+        uImage: 0,
+        uSetup: least * scale,
+        u: least * scale,
+        bound: 'at-most',
+      };
       continue;
     }
     const uImage = sigma(slot.sizes + i) * value;
-    const uSetup = parameter.kind === 'length' ? value * scale : 0;
-    dimensions[parameter.key] = { value, uImage, uSetup, u: Math.hypot(uImage, uSetup), bound: null };
+    const uSetup = kind === 'length' ? value * scale : 0;
+    dimensions[key] = { value, uImage, uSetup, u: Math.hypot(uImage, uSetup), bound: null };
   }
   const period = family.rotationPeriod;
   return {
@@ -62,6 +88,12 @@ export function candidateOf(
       blurVariance: parameters[slot.blur],
     },
   };
+}
+
+/** Standard uncertainty of a finalist's centre, px: the larger of the two directions. */
+export function centerUncertainty(ranking: Ranking, finalist: Finalist): number {
+  const sigma = imageUncertainty(ranking, finalist);
+  return Math.max(sigma(slot.x), sigma(slot.y));
 }
 
 function backgroundAtCenter(ranking: Ranking, p: Float64Array): Candidate['fit']['background'] {
