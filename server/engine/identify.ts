@@ -1,5 +1,5 @@
+import { withoutBeamBlock } from '#server/engine/beam-block.ts';
 import { findCenters, otherCenters } from '#server/engine/center.ts';
-import type { Frame } from '#server/engine/frame.ts';
 import { judge, type Judgement } from '#server/engine/judge.ts';
 import type {
   Candidate,
@@ -82,7 +82,7 @@ export function identify(picture: Picture, setup: Setup, options: IdentifyOption
   const unresolved = unresolvedReason(bench, best);
   if (unresolved) return { kind: 'unusable', reasons: [unresolved], picture: facts };
   tell('Working out the uncertainties', 0.97);
-  const outcome = answer(best, setup, frame);
+  const outcome = answer(best, setup);
   tell('Done', 1);
   return outcome;
 }
@@ -95,10 +95,11 @@ interface Examined {
 }
 
 function examine(
-  bench: Bench,
+  open: Bench,
   center: { x: number; y: number },
   onStep: (step: string, share: number) => void,
 ): Examined | null {
+  const bench = { ...open, frame: withoutBeamBlock(open.frame, center) };
   const random = seededRandom(20_240_607);
   const found = searchAbout(bench, center, random, (step, share) => onStep(step, 0.6 * share));
   if (!found || found.trials.length === 0) return null;
@@ -136,7 +137,8 @@ function promisingCenters(
     .slice(0, 2);
 }
 
-function answer({ ranking, judgement }: Examined, setup: Setup, frame: Frame): Outcome {
+function answer({ ranking, judgement }: Examined, setup: Setup): Outcome {
+  const { frame } = ranking.bench;
   const candidates = judgement.ranked
     .slice(0, maxCandidates)
     .map(({ finalist, probability }) => candidateOf(ranking, finalist, probability, setup));
@@ -153,7 +155,7 @@ function answer({ ranking, judgement }: Examined, setup: Setup, frame: Frame): O
         ...best.fit.center,
         u: centerUncertainty(ranking, judgement.ranked[0].finalist),
       }),
-      noise: ranking.bench.frame.noise,
+      noise: frame.noise,
     },
   };
 }

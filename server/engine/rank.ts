@@ -27,7 +27,9 @@ export interface Ranking {
 
 const middle = { residuals: 'stabilised', maxSteps: 20, huber: 4, texture: 1e-4 } as const;
 const last = { residuals: 'weighted', maxSteps: 8, huber: 4, texture: 1e-4 } as const;
-const finalPixels = 36_000;
+const finalPixels = 28_000;
+/** A finalist this many times worse after the middle fit cannot win: it is listed, not polished. */
+const outOfReach = 2.5;
 
 /** Takes the leading trials through the middle and the last fit and orders them by evidence. */
 export function rankTrials(
@@ -43,7 +45,7 @@ export function rankTrials(
   const all = allBins(bench.frame, bin, center, Number.POSITIVE_INFINITY);
   const some = pick(all, 5000, 0.8, worthOf(bench, leader, all), random);
   onStep('Refining the best shapes', 0);
-  const contenders = trials.filter((t) => t.cost < 12 * leader.cost + 2).slice(0, 6);
+  const contenders = trials.filter((t) => t.cost < 8 * leader.cost + 1).slice(0, 6);
   let fitted = contenders
     .map((t) => canonical(fitTrial(bench, t, some, { ...middle, free: freeOf(t, { slopes: true }) }).trial))
     .sort((p, q) => p.cost - q.cost);
@@ -56,7 +58,8 @@ export function rankTrials(
   const blurred = wantsBlur(refined, short[0], set);
   short.forEach((t, i) => {
     onStep(`Measuring as ${t.family.label.toLowerCase()}`, 0.45 + (0.5 * i) / short.length);
-    finalists.push(lastFit(refined, t, set, blurred));
+    const polished = t.cost < outOfReach * short[0].cost + 0.5;
+    finalists.push(polished ? lastFit(refined, t, set, blurred) : roughFit(refined, t, set));
   });
   return { ...order(refined, finalists, set, blurred), plainNoise: bench.frame.noise };
 }
@@ -117,6 +120,12 @@ function lastFit(bench: Bench, trial: Trial, set: PixelSet, blur: boolean): Tria
   let current = trial;
   for (let round = 0; round < 2; round++) current = fitTrial(bench, current, set, options).trial;
   return canonical(current);
+}
+
+/** Two steps on the final pixels: enough for a shape that the middle fit has ruled out. */
+function roughFit(bench: Bench, trial: Trial, set: PixelSet): Trial {
+  const options: FitOptions = { ...last, maxSteps: 2, free: freeOf(trial, { slopes: true }) };
+  return canonical(fitTrial(bench, trial, set, options).trial);
 }
 
 /** Evidence on identical pixels with identical weights: those of the finalist that fits best. */

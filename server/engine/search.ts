@@ -1,4 +1,5 @@
 import { coarseSearch, type CoarseCandidate } from '#server/engine/coarse.ts';
+import { finestFringes } from '#server/engine/finest-fringes.ts';
 import { logPolarMap } from '#server/engine/log-polar.ts';
 import { slot } from '#server/engine/pattern.ts';
 import { allBins, pick, signalToNoise, type PixelSet } from '#server/engine/pixel-set.ts';
@@ -37,7 +38,7 @@ export function searchAbout(
   const seeds = chooseSeeds(coarse);
   const extent = Math.min(...seeds.slice(0, 4).map(extentOf));
   const period = pixelsPerFringe(extent, geometry.wavelength, geometry.distance, geometry.pixelPitch);
-  const bin = binFor(bench, extent * 1.3);
+  const bin = screeningBin(bench, extent * 1.3, center);
   const all = screeningSet(bench, bin, center, Number.POSITIVE_INFINITY, random);
   const near = screeningSet(bench, bin, center, 8 * period, random);
   const run = new Screening(bench, near, all);
@@ -84,7 +85,15 @@ export function binFor(bench: Bench, extent: number, samples = samplesPerFringe)
   return Math.max(1, Math.min(24, Math.floor(period / samples)));
 }
 
-/** Some 2 500 bins: mostly where there is signal, evenly by chance, some for the background. */
+/** The atlas cannot see fringes finer than its cells: bins follow the finest structure of the picture, within a quarter. */
+function screeningBin(bench: Bench, extent: number, center: { x: number; y: number }): number {
+  const expected = binFor(bench, extent);
+  if (expected < 2) return expected;
+  const finest = Math.floor(finestFringes(bench.frame, center) / 6);
+  return Math.max(1, Math.ceil(expected / 4), Math.min(expected, finest));
+}
+
+/** Some 2 000 bins: mostly where there is signal, evenly by chance, some for the background. */
 function screeningSet(
   bench: Bench,
   bin: number,
@@ -95,7 +104,7 @@ function screeningSet(
   const all = allBins(bench.frame, bin, center, radius);
   return pick(
     all,
-    2500,
+    2000,
     0.75,
     (k) => Math.min(signalToNoise(bench.frame, all, k), 4) + 0.5 * random(),
     random,
