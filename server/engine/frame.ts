@@ -26,6 +26,8 @@ export interface Frame {
   readonly noise: NoiseLaw;
   readonly background: Plane;
   readonly saturatedShare: number;
+  /** True where the file format has altered the counts (JPEG). */
+  readonly lossy: boolean;
 }
 
 export function planeAt(plane: Plane, x: number, y: number): number {

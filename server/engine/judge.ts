@@ -5,6 +5,8 @@ import { fitterFor, sizesOf } from '#server/engine/trial.ts';
 
 /** Misfit above which no shape of the catalogue is named. Found on the project's own simulations. */
 const misfitLimit = 7;
+/** Misfit above which an undamaged picture leaves room for a shape outside the catalogue: the first answer is not final. */
+const doubtLimit = 4;
 /** Evidence (−2 ln) that parts two shapes. */
 const gapLimit = 12;
 
@@ -26,8 +28,9 @@ export function judge(ranking: Ranking): Judgement {
   const sum = weights.reduce((a, b) => a + b, 0);
   const ranked = kept.map((finalist, i) => ({ finalist, probability: (known * weights[i]) / sum }));
   const gap = kept.length > 1 ? kept[1].evidence - best.evidence : Number.POSITIVE_INFINITY;
+  const doubtful = misfit > doubtLimit && !ranking.bench.frame.lossy;
   const verdict: Verdict =
-    misfit > misfitLimit ? 'unidentified' : gap < gapLimit ? 'ambiguous' : 'identified';
+    misfit > misfitLimit ? 'unidentified' : gap < gapLimit || doubtful ? 'ambiguous' : 'identified';
   return { verdict, ranked, misfit };
 }
 

@@ -31,7 +31,16 @@ export function prepare(picture: Picture, setup: Setup): Frame {
   maskHotPixels(data, mask, width, height, first.a, first.b, rough);
   const background = backgroundPlane(data, mask, width, height);
   const noise = estimateNoise(data, mask, width, height, background.offset, floor);
-  return { width, height, data, mask, noise, background, saturatedShare: saturated / data.length };
+  return {
+    width,
+    height,
+    data,
+    mask,
+    noise,
+    background,
+    saturatedShare: saturated / data.length,
+    lossy: picture.lossy,
+  };
 }
 
 /** The lowest code that counts as saturated: full scale, or a little less where the file is lossy. */

@@ -33,10 +33,10 @@ const pixelPitch = 5.2e-6;
 
 export function exposureOf(spec: ExposureSpec): { picture: Picture; setup: Setup } {
   const family = familyOf(spec.family);
-  const { width = 360, height = 300, bitDepth = 12, encoding = 'linear', geometry = 'lens' } = spec;
+  const { width = 240, height = 200, bitDepth = 12, encoding = 'linear', geometry = 'lens' } = spec;
   const model = spec.model ? family.models.find((m) => m.id === spec.model)! : modelFor(spec);
   const extent = family.extent(spec.values);
-  const distance = ((spec.finestPeriod ?? 14) * extent * pixelPitch) / wavelength;
+  const distance = ((spec.finestPeriod ?? 12) * extent * pixelPitch) / wavelength;
   const keys = new Set(family.parameters.map((p) => p.key));
   // Nuisances: the beam is three openings wide.
   const values = model.fromFamily(spec.values).map((v, i) => (keys.has(model.keys[i]) ? v : 3 * extent));

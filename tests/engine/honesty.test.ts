@@ -7,7 +7,7 @@ import { detect } from '#shared/physics/detector.ts';
 import { seededRandom } from '#shared/physics/random.ts';
 import { exposureOf } from '#tests/engine/exposure.ts';
 
-const n = 512;
+const n = 256;
 
 /** Far field of any mask as a 12-bit picture; the mask's plane has n cells of 2 µm. */
 function pictureOf(distance: (x: number, y: number) => number): Picture {

@@ -54,15 +54,18 @@ describe('an everyday exposure', () => {
     seed: 5,
   };
 
+  let known: Answer | undefined;
+  const plain = () => (known ??= answerTo(slot));
+
   it('with a saturated core is measured from its flanks', () => {
     const answer = expectRight({ ...slot, exposure: 6 });
     expect(answer.picture.saturatedShare).toBeGreaterThan(0.005);
   });
 
   it('far off centre is found where it is', () => {
-    const answer = expectRight({ ...slot, center: { x: 95.4, y: 220.8 } });
-    expect(answer.picture.center!.x).toBeCloseTo(95.4, 1);
-    expect(answer.picture.center!.y).toBeCloseTo(220.8, 1);
+    const answer = expectRight({ ...slot, center: { x: 65.4, y: 140.8 } });
+    expect(answer.picture.center!.x).toBeCloseTo(65.4, 1);
+    expect(answer.picture.center!.y).toBeCloseTo(140.8, 1);
   });
 
   it('over a sloping background keeps its size', () => {
@@ -86,24 +89,24 @@ describe('an everyday exposure', () => {
   it('on a sensor or a screen counts exact direction cosines', () => {
     const steep: ExposureSpec = { family: 'pinhole', values: { diameter: 9e-6 }, finestPeriod: 20, seed: 8 };
     for (const geometry of ['sensor', 'screen'] as const) {
-      // λL/(9 µm · pitch) = 20 px makes L = 1.5 mm: the corner of the picture is 39° off the axis.
+      // λL/(9 µm · pitch) = 20 px makes L = 1.5 mm: the corner of the picture is 28° off the axis.
       const answer = expectRight({ ...steep, geometry });
       expect(answer.farField.holds).toBe(true);
     }
   });
 
   it('is answered the same way twice', () => {
-    expect(answerTo(slot)).toEqual(answerTo(slot));
+    expect(answerTo(slot)).toEqual(plain());
   });
 
   it('states the part of the set-up: sizes scale with λL/p', () => {
-    const best = answerTo(slot).candidates[0];
+    const best = plain().candidates[0];
     const relative = Math.hypot(0.1 / 632.8, 1e-3, 5e-9 / 5.2e-6);
     expect(best.dimensions['length'].uSetup / best.dimensions['length'].value!).toBeCloseTo(relative, 9);
   });
 
   it('shares its probability with "none of these"', () => {
-    const sum = answerTo(slot).candidates.reduce((total, c) => total + c.probability, 0);
+    const sum = plain().candidates.reduce((total, c) => total + c.probability, 0);
     expect(sum).toBeGreaterThan(0.9);
     expect(sum).toBeLessThan(1);
   });
