@@ -11,6 +11,8 @@ export interface Template {
   readonly values: readonly number[];
   /** Which of the values are whole numbers, which do not scale. */
   readonly counts: readonly boolean[];
+  /** Largest extent in unit lengths. */
+  readonly extent: number;
   readonly re: Float64Array;
   readonly im: Float64Array;
   readonly squareRe: Float64Array;
@@ -73,5 +75,6 @@ function buildTemplate(family: ApertureFamily, model: FarFieldModel, values: rea
   fft2InPlace(re, im, rows, angles, 'forward');
   fft2InPlace(squareRe, squareIm, rows, angles, 'forward');
   const counts = model.keys.map((key) => isCount(family, key));
-  return { family: family.id, model, values, counts, re, im, squareRe, squareIm };
+  const extent = family.extent(model.toFamily(values));
+  return { family: family.id, model, values, counts, extent, re, im, squareRe, squareIm };
 }

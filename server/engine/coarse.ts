@@ -52,7 +52,13 @@ export function coarseSearch(map: LogPolarMap, frequencyPerPixel: number): Coars
   ];
   return unitAtlas()
     .map((template) => {
-      const peak = bestShift(template, { aRe, aIm, wRe, wIm, w, energy }, used, scratch);
+      const firstRow = smallestRow(template.extent, map);
+      const peak = bestShift(
+        template,
+        { aRe, aIm, wRe, wIm, w, energy },
+        [firstRow, rows - used - 1],
+        scratch,
+      );
       const size = Math.exp((peak.row - templateOrigin) * logPolar.step) / unitFrequency;
       const turn = -peak.column * logPolar.step;
       return {
@@ -64,6 +70,13 @@ export function coarseSearch(map: LogPolarMap, frequencyPerPixel: number): Coars
       };
     })
     .sort((p, q) => q.score - p.score);
+}
+
+/** The row of the smallest size looked for: one whose first minimum lies a little outside the picture. */
+function smallestRow(extent: number, map: LogPolarMap): number {
+  const smallest = (0.7 * map.firstRadius) / (map.reach * extent);
+  const row = Math.ceil(templateOrigin + Math.log(smallest) / logPolar.step);
+  return Math.max(1, Math.min(row, logPolar.rows - map.used - 2));
 }
 
 interface Spectra {
@@ -78,7 +91,7 @@ interface Spectra {
 function bestShift(
   t: Template,
   s: Spectra,
-  used: number,
+  [firstRow, lastRow]: readonly [number, number],
   scratch: [Float64Array, Float64Array, Float64Array, Float64Array],
 ): { row: number; column: number; score: number } {
   const { angles, rows } = logPolar;
@@ -96,14 +109,13 @@ function bestShift(
   }
   fft2InPlace(pRe, pIm, rows, angles, 'inverse');
   fft2InPlace(qRe, qIm, rows, angles, 'inverse');
-  const lastShift = rows - used - 1;
   const score = (row: number, column: number): number => {
     const k = row * angles + ((column + angles) % angles);
     const variance = qRe[k] - (pIm[k] * pIm[k]) / s.w;
     return variance > 1e-6 * s.w ? pRe[k] / Math.sqrt(variance * s.energy) : 0;
   };
-  let best = { row: 0, column: 0, score: -1 };
-  for (let row = 1; row < lastShift; row++)
+  let best = { row: firstRow, column: 0, score: -1 };
+  for (let row = firstRow; row < lastRow; row++)
     for (let column = 0; column < angles; column++) {
       const value = score(row, column);
       if (value > best.score) best = { row, column, score: value };

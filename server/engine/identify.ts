@@ -113,7 +113,8 @@ function unresolvedReason({ geometry }: Bench, { ranking, judgement }: Examined)
   const extent = best.family.extent(best.model.toFamily(sizesOf(best)));
   const period = pixelsPerFringe(extent, geometry.wavelength, geometry.distance, geometry.pixelPitch);
   if (period < pixelsPerFringeLimit) return 'fringes-undersampled';
-  return extent < smallestMeasurable(ranking, best) ? 'no-minimum-in-frame' : null;
+  const named = judgement.verdict !== 'unidentified';
+  return named && extent < smallestMeasurable(ranking, best) ? 'no-minimum-in-frame' : null;
 }
 
 /** At most two other centres that the atlas likes about as much as the one already tried. */

@@ -13,6 +13,8 @@ export interface LogPolarMap {
   readonly weights: Float64Array;
   /** Radius in pixels of row 0. */
   readonly firstRadius: number;
+  /** Distance in pixels from the centre to the farthest corner of the picture. */
+  readonly reach: number;
   /** Number of rows that hold picture. */
   readonly used: number;
 }
@@ -45,16 +47,15 @@ export function logPolarMap(frame: Frame, center: { x: number; y: number }): Log
       sum[k] += data[p] - planeAt(background, x, y);
       count[k] += 1;
     }
-  return compressMap(frame, { sum, count, all }, firstRadius, used);
+  return { ...compressMap(frame, { sum, count, all }, used), firstRadius, reach: far };
 }
 
 /** Signed square root over a small offset; weight grows with the radius and falls with the share of masked pixels. */
 function compressMap(
   frame: Frame,
   cells: { sum: Float64Array; count: Float64Array; all: Float64Array },
-  firstRadius: number,
   used: number,
-): LogPolarMap {
+): Pick<LogPolarMap, 'values' | 'weights' | 'used'> {
   const { angles, rows, step } = logPolar;
   const values = new Float64Array(rows * angles);
   const weights = new Float64Array(rows * angles);
@@ -72,10 +73,5 @@ function compressMap(
   }
   const cut = Math.min(used, lastSignificant + Math.ceil(Math.log(1.65) / step));
   for (let k = cut * angles; k < rows * angles; k++) weights[k] = 0;
-  return { values, weights, firstRadius, used: cut };
-}
-
-/** The radius in bins or pixels at the middle of a row. */
-export function radiusOfRow(map: { firstRadius: number }, row: number): number {
-  return map.firstRadius * Math.exp(logPolar.step * (row + 0.5));
+  return { values, weights, used: cut };
 }

@@ -129,6 +129,7 @@ class Screening {
     if (first.cost > hopelessRatio * this.#least + 1) return;
     this.#least = Math.min(this.#least, first.cost);
     const trial = canonical(fitTrial(this.bench, first, this.all, { ...screening, free }).trial);
+    if (!isNearFrame(this.bench, trial)) return;
     const key = keyOf(trial);
     const other = this.best.get(key);
     if (!other || trial.cost < other.cost) this.best.set(key, trial);
@@ -137,6 +138,13 @@ class Screening {
   ranked(): Trial[] {
     return [...this.best.values()].sort((p, q) => p.cost - q.cost);
   }
+}
+
+/** A centre far outside the picture is a flight of the fit, not a finding. */
+function isNearFrame({ frame: { width, height } }: Bench, { parameters }: Trial): boolean {
+  const margin = 0.3 * Math.max(width, height);
+  const [x, y] = [parameters[slot.x], parameters[slot.y]];
+  return x > -margin && y > -margin && x < width + margin && y < height + margin;
 }
 
 /** Names a family's model: one trial of each is kept. */

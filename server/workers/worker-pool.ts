@@ -44,9 +44,7 @@ export function createWorkerPool(
       );
       port1.unref();
       try {
-        return await run<Outcome>({ kind: 'identify', bytes, bench, progress: port2 }, signal, [
-          port2 as never,
-        ]);
+        return await run<Outcome>({ kind: 'identify', bytes, bench, progress: port2 }, signal, [port2]);
       } finally {
         port1.close();
       }
