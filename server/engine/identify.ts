@@ -1,5 +1,6 @@
 import { withoutBeamBlock } from '#server/engine/beam-block.ts';
 import { findCenters, otherCenters } from '#server/engine/center.ts';
+import { finestFringes } from '#server/engine/finest-fringes.ts';
 import { judge, type Judgement } from '#server/engine/judge.ts';
 import type {
   Candidate,
@@ -11,6 +12,7 @@ import type {
   Untold,
   UnusableReason,
 } from '#server/engine/outcome.ts';
+import { slot } from '#server/engine/pattern.ts';
 import { prepare } from '#server/engine/prepare.ts';
 import { rankTrials, type Ranking } from '#server/engine/rank.ts';
 import { coarseScoreAbout, searchAbout } from '#server/engine/search.ts';
@@ -107,12 +109,21 @@ function examine(
   return { ranking, judgement: judge(ranking), center, coarseScore: found.coarseScore };
 }
 
-/** Fringes too fine for the pixels, or too coarse for the frame, whichever shape they belong to. */
-function unresolvedReason({ geometry }: Bench, { ranking, judgement }: Examined): UnusableReason | null {
+/**
+ * Fringes too fine for the pixels, or too coarse for the frame, whichever shape they belong to. Fine ones need two
+ * witnesses, the fitted size and the picture's own finest structure: a wrong shape may come out far too large.
+ */
+function unresolvedReason(
+  { frame, geometry }: Bench,
+  { ranking, judgement }: Examined,
+): UnusableReason | null {
   const best = judgement.ranked[0].finalist;
   const extent = best.family.extent(best.model.toFamily(sizesOf(best)));
   const period = pixelsPerFringe(extent, geometry.wavelength, geometry.distance, geometry.pixelPitch);
-  if (period < pixelsPerFringeLimit) return 'fringes-undersampled';
+  if (period < pixelsPerFringeLimit) {
+    const center = { x: best.parameters[slot.x], y: best.parameters[slot.y] };
+    return finestFringes(frame, center) < pixelsPerFringeLimit ? 'fringes-undersampled' : null;
+  }
   const named = judgement.verdict !== 'unidentified';
   return named && extent < smallestMeasurable(ranking, best) ? 'no-minimum-in-frame' : null;
 }
