@@ -1,6 +1,6 @@
 import type { z } from 'zod';
-import { demoBenches } from '#server/demo/demo-benches.ts';
-import { demoPeople } from '#server/demo/demo-people.ts';
+import type { demoBenches } from '#server/demo/demo-benches.ts';
+import type { demoPeople } from '#server/demo/demo-people.ts';
 import type { DemoExposure } from '#server/demo/demo-picture.ts';
 import { unequalHoles } from '#server/demo/unequal-holes.ts';
 import { familyOf } from '#shared/apertures/registry.ts';

@@ -1,88 +1,69 @@
 import { decode } from 'tiff';
-import { Refusal } from '#server/http/refusal.ts';
-import { dropChannels, type Samples } from '#server/images/samples.ts';
-import { checkSize, damaged, ofMany, truncated } from '#server/images/sniff.ts';
+import { inflateWithin } from '#server/images/inflate-within.ts';
+import { opaqueSamples, type Samples } from '#server/images/samples.ts';
+import { checkSize, damaged, truncated, unsupported } from '#server/images/sniff.ts';
+import { readTiffDirectory, tags, type TiffDirectory } from '#server/images/tiff-directory.ts';
 
-const tags = {
-  width: 256,
-  height: 257,
-  stripOffsets: 273,
-  stripSizes: 279,
-  tileOffsets: 324,
-  tileSizes: 325,
-};
+const mend = 'Save it as 8-bit or 16-bit unsigned grey TIFF without compression.';
 
-/** TIFF of 8 or 16 bits, grey or colour, one page. The directory is read before decoding. */
+/** TIFF of 8 or 16 bits, grey or colour, one page. The directory is judged before anything is unpacked. */
 export function decodeTiff(bytes: Buffer): Samples {
-  const directory = readDirectory(bytes);
-  const width = directory.get(tags.width)?.[0] ?? 0;
-  const height = directory.get(tags.height)?.[0] ?? 0;
+  const directory = readTiffDirectory(bytes);
+  const width = directory.number(tags.width, 0);
+  const height = directory.number(tags.height, 0);
   checkSize(width, height);
-  const offsets = directory.get(tags.stripOffsets) ?? directory.get(tags.tileOffsets) ?? [];
-  const sizes = directory.get(tags.stripSizes) ?? directory.get(tags.tileSizes) ?? [];
-  offsets.forEach((offset, i) => {
-    if (offset + (sizes[i] ?? 0) > bytes.length) throw truncated();
-  });
-  let page: ReturnType<typeof decode>[number];
+  const depth = directory.number(tags.bitsPerSample, 1);
+  const channels = directory.number(tags.samplesPerPixel, 1);
+  requireMeasurable(directory, depth, channels);
+  checkBlocks(bytes, directory, (channels * depth) / 8);
+  let data: unknown;
   try {
-    page = decode(bytes)[0];
-  } catch {
+    data = decode(bytes)[0].data;
+  } catch (error) {
+    if (/unsupported/i.test((error as Error).message))
+      throw unsupported('The TIFF is packed in a way that cannot be read.', mend);
     throw damaged();
   }
-  const { data, samplesPerPixel, bitsPerSample, type } = page;
-  if (
-    !(data instanceof Uint8Array || data instanceof Uint16Array) ||
-    (bitsPerSample !== 8 && bitsPerSample !== 16)
-  )
-    throw new Refusal(
-      'picture-format-unsupported',
-      `The TIFF has ${bitsPerSample} bits a sample in a form that cannot be measured. Save it as 8-bit or 16-bit unsigned grey.`,
-    );
-  if (type !== 0 && type !== 1 && type !== 2)
-    throw new Refusal(
-      'picture-format-unsupported',
-      'The TIFF has a palette or another colour coding. Save it as 16-bit grey.',
-    );
-  const channels = samplesPerPixel >= 3 ? 3 : 1;
-  const samples = dropChannels(data, samplesPerPixel, channels);
-  // Photometric interpretation 0 counts from white (TIFF 6.0, section 3).
-  if (type === 0)
-    for (let i = 0; i < samples.length; i++) samples[i] = (bitsPerSample === 16 ? 65535 : 255) - samples[i];
-  return {
-    width: page.width,
-    height: page.height,
-    channels,
-    data: samples,
-    depth: bitsPerSample,
-    lossy: false,
-  };
+  if (!(data instanceof Uint8Array || data instanceof Uint16Array)) throw damaged();
+  const fileDepth = depth === 16 ? 16 : 8;
+  return { width, height, ...opaqueSamples(data, channels, fileDepth), depth: fileDepth, lossy: false };
 }
 
-/** Tag to numbers of the first directory (TIFF 6.0, section 2). Throws when there is a second one. */
-function readDirectory(bytes: Buffer): Map<number, number[]> {
-  const little = bytes[0] === 0x49;
-  const u16 = (at: number) => (little ? bytes.readUInt16LE(at) : bytes.readUInt16BE(at));
-  const u32 = (at: number) => (little ? bytes.readUInt32LE(at) : bytes.readUInt32BE(at));
-  const directory = new Map<number, number[]>();
-  try {
-    const start = u32(4);
-    const count = u16(start);
-    for (let i = 0; i < count; i++) {
-      const entry = start + 2 + 12 * i;
-      const type = u16(entry + 2);
-      const n = u32(entry + 4);
-      const width = type === 3 ? 2 : type === 4 ? 4 : 0;
-      if (width === 0 || n > 1e6) continue;
-      const at = n * width <= 4 ? entry + 8 : u32(entry + 8);
-      directory.set(
-        u16(entry),
-        Array.from({ length: n }, (_, k) => (width === 2 ? u16(at + 2 * k) : u32(at + 4 * k))),
-      );
-    }
-    if (u32(start + 2 + 12 * count) !== 0) throw ofMany('a TIFF of several pages');
-  } catch (error) {
-    if (error instanceof RangeError) throw truncated();
-    throw error;
-  }
-  return directory;
+/** Kinds that hold no plain brightness, or that the decoder would read wrongly (TIFF 6.0). */
+function requireMeasurable(directory: TiffDirectory, depth: number, channels: number): void {
+  if (depth !== 8 && depth !== 16)
+    throw unsupported(`The TIFF has ${depth} bits a sample, which cannot be measured.`, mend);
+  if (directory.number(tags.sampleFormat, 1) !== 1)
+    throw unsupported('The samples of the TIFF are signed or floating-point numbers.', mend);
+  if (directory.number(tags.photometric, 1) > 2)
+    throw unsupported('The TIFF has a palette or another colour coding.', mend);
+  const tiled = directory.numbers(tags.tileOffsets).length > 0;
+  if (channels > 1 && (tiled || directory.number(tags.planar, 1) !== 1))
+    throw unsupported('The colours of the TIFF are stored in tiles or planes of their own.', mend);
+  if (directory.number(tags.orientation, 1) !== 1)
+    throw unsupported('The TIFF is marked to be turned or mirrored before it is looked at.', mend);
+}
+
+/** Every strip or tile lies inside the file and unpacks to what its rows need. */
+function checkBlocks(bytes: Buffer, directory: TiffDirectory, pixel: number): void {
+  const tiled = directory.numbers(tags.tileOffsets).length > 0;
+  const offsets = directory.numbers(tiled ? tags.tileOffsets : tags.stripOffsets);
+  const sizes = directory.numbers(tiled ? tags.tileSizes : tags.stripSizes);
+  if (offsets.length === 0) throw damaged();
+  const width = directory.number(tags.width, 0);
+  const height = directory.number(tags.height, 0);
+  const rows = Math.min(directory.number(tags.rowsPerStrip, height), height);
+  const block = tiled
+    ? directory.number(tags.tileWidth, 0) * directory.number(tags.tileHeight, 0) * pixel
+    : rows * width * pixel;
+  if (!tiled && offsets.length * rows < height) throw damaged();
+  const compression = directory.number(tags.compression, 1);
+  offsets.forEach((offset, i) => {
+    const needed = tiled ? block : Math.min(rows, height - i * rows) * width * pixel;
+    const size = sizes[i] ?? (compression === 1 ? needed : 0);
+    if (offset + size > bytes.length) throw truncated();
+    if (compression === 1 && size < needed) throw truncated();
+    if (compression === 8 || compression === 32946)
+      inflateWithin(bytes.subarray(offset, offset + size), needed, block);
+  });
 }

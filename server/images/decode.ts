@@ -1,6 +1,7 @@
 import type { Picture } from '#server/engine/outcome.ts';
 import { codeScale } from '#server/images/depth.ts';
-import { decodeBmp, decodeJpeg } from '#server/images/decode-bitmap.ts';
+import { decodeBmp } from '#server/images/decode-bmp.ts';
+import { decodeJpeg } from '#server/images/decode-jpeg.ts';
 import { decodePng } from '#server/images/decode-png.ts';
 import { decodeTiff } from '#server/images/decode-tiff.ts';
 import { onePlane } from '#server/images/plane.ts';

@@ -7,8 +7,12 @@ const foreign: readonly (readonly [string, (b: Buffer) => boolean])[] = [
   ['a WebP picture', (b) => ascii(b, 0, 4) === 'RIFF' && ascii(b, 8, 12) === 'WEBP'],
   ['a HEIC or AVIF picture', (b) => ascii(b, 4, 8) === 'ftyp'],
   ['a PDF document', (b) => ascii(b, 0, 4) === '%PDF'],
+  ['a BigTIFF', (b) => ascii(b, 0, 4) === 'II+\0' || ascii(b, 0, 4) === 'MM\0+'],
+  ['a JPEG XL picture', (b) => ascii(b, 0, 2) === '\xff\x0a' || ascii(b, 4, 8) === 'JXL '],
+  ['a JPEG 2000 picture', (b) => ascii(b, 4, 8) === 'jP  '],
   ['a zip archive', (b) => ascii(b, 0, 2) === 'PK'],
   ['an SVG drawing', (b) => /^\s*(<\?xml[^>]*>\s*)?<svg/i.test(b.subarray(0, 400).toString('utf8'))],
+  ['a text file', (b) => /^[\t\r\n\x20-\x7e]+$/.test(ascii(b, 0, 400))],
 ];
 
 const extensions: Record<PictureFormat, readonly string[]> = {
@@ -38,7 +42,8 @@ export function sniffFormat(bytes: Buffer, fileName: string): PictureFormat {
         : 'The file is not a PNG, TIFF, JPEG or BMP picture. Save the exposure as PNG or TIFF from the camera and send that.',
     );
   }
-  const ending = /\.([a-z0-9]+)$/i.exec(fileName)?.[1]?.toLowerCase();
+  // A name such as "L=0.85" has no ending; one that begins with a letter claims a type.
+  const ending = /\.([a-z][a-z0-9]{0,4})$/i.exec(fileName)?.[1]?.toLowerCase();
   const named = (Object.keys(extensions) as PictureFormat[]).find(
     (f) => ending && extensions[f].includes(ending),
   );
@@ -85,6 +90,11 @@ export function damaged(): Refusal {
     'picture-damaged',
     'The picture file is damaged and cannot be decoded. Copy it again from the camera and send it anew.',
   );
+}
+
+/** A kind of file that would lose or hide what is measured. */
+export function unsupported(why: string, mend: string): Refusal {
+  return new Refusal('picture-format-unsupported', `${why} ${mend}`);
 }
 
 export function ofMany(what: string): Refusal {
