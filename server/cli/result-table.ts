@@ -1,5 +1,5 @@
 import type { Candidate, Outcome } from '#server/engine/outcome.ts';
-import { unusableSentences } from '#server/features/exposures/unusable-sentences.ts';
+import { unusableSentences } from '#server/images/unusable-sentences.ts';
 import { familyOf } from '#shared/apertures/registry.ts';
 import { printMeasured } from '#shared/quantities.ts';
 

@@ -1,5 +1,5 @@
 import { Refusal } from '#server/http/refusal.ts';
-import { identifyTask, inspectTask, pixelsTask, type Task } from '#server/workers/tasks.ts';
+import { identifyTask, inspectTask, pixelsTask, thumbnailTask, type Task } from '#server/workers/tasks.ts';
 import type { ProblemCode } from '#shared/problems.ts';
 
 /** A refusal crosses the thread as data, since only plain errors survive the journey. */
@@ -14,7 +14,7 @@ export default async function work(task: Task): Promise<Answer> {
     if (error instanceof Refusal) return { refusal: { code: error.code, detail: error.message } };
     throw error;
   } finally {
-    if (task.kind === 'identify') task.progress?.close();
+    if (task.kind === 'identify') task.progress.close();
   }
 }
 
@@ -22,16 +22,13 @@ function run(task: Task): Promise<unknown> {
   switch (task.kind) {
     case 'inspect':
       return inspectTask(task.bytes, task.fileName, task.bench);
+    case 'thumbnail':
+      return thumbnailTask(task.bytes, task.center);
     case 'pixels':
       return pixelsTask(task.bytes);
     case 'identify': {
-      const { progress, stop } = task;
-      return identifyTask(
-        task.bytes,
-        task.bench,
-        (step, share) => progress?.postMessage({ step, share }),
-        () => stop !== undefined && Atomics.load(stop, 0) !== 0,
-      );
+      const { progress } = task;
+      return identifyTask(task.bytes, task.bench, (step, share) => progress.postMessage({ step, share }));
     }
   }
 }

@@ -1,7 +1,7 @@
 import type { MessagePort } from 'node:worker_threads';
 import { identify } from '#server/engine/identify.ts';
 import { inspectPicture } from '#server/engine/inspect.ts';
-import type { Outcome } from '#server/engine/outcome.ts';
+import type { Outcome, PictureFacts } from '#server/engine/outcome.ts';
 import { decodePicture } from '#server/images/decode.ts';
 import { setupOf } from '#server/images/setup-of.ts';
 import { thumbnail } from '#server/images/thumbnail.ts';
@@ -16,16 +16,16 @@ export type Task =
       readonly fileName: string;
       readonly bench: BenchValues;
     }
+  | { readonly kind: 'thumbnail'; readonly bytes: Uint8Array; readonly center: PictureFacts['center'] }
   | { readonly kind: 'pixels'; readonly bytes: Uint8Array }
   | {
       readonly kind: 'identify';
       readonly bytes: Uint8Array;
       readonly bench: BenchValues;
-      readonly progress?: MessagePort;
-      readonly stop?: Int32Array;
+      readonly progress: MessagePort;
     };
 
-/** Decodes, takes the facts and makes the small picture. Throws a Refusal for a file that cannot be decoded. */
+/** Decodes and takes the facts. Throws a Refusal for a file that cannot be decoded. */
 export async function inspectTask(
   bytes: Uint8Array,
   fileName: string,
@@ -38,8 +38,11 @@ export async function inspectTask(
     decoded: { format, width, height, bitDepth, fullScale, codeStep, lossy, channel },
     facts,
     unusable,
-    thumbnail: thumbnail(picture, facts.center),
   };
+}
+
+export async function thumbnailTask(bytes: Uint8Array, center: PictureFacts['center']): Promise<Uint8Array> {
+  return thumbnail(await decodePicture(bytes, '', 16), center);
 }
 
 /** The measured plane, little endian. */
@@ -55,7 +58,7 @@ export async function identifyTask(
   bytes: Uint8Array,
   bench: BenchValues,
   onProgress: (step: string, share: number) => void,
-  shouldStop: () => boolean,
+  shouldStop: () => boolean = () => false,
 ): Promise<Outcome> {
   const picture = await decodePicture(bytes, '', bench.bitDepth);
   return identify(picture, setupOf(bench, picture), { onProgress, shouldStop });

@@ -10,25 +10,32 @@ import type { Task } from '#server/workers/tasks.ts';
 /** A picture that keeps a thread busy for longer than this costs its own job and nothing else. */
 const timeLimit = 5 * 60_000;
 
+/** As many as there are cores, within reason. */
+export const identificationsAtOnce = Math.max(1, Math.min(4, availableParallelism()));
+
 /** The engine in worker threads. `file` is the bundled worker. */
-export function createWorkerPool(
-  file: string,
-  threads = Math.max(1, Math.min(4, availableParallelism())),
-): EnginePool {
+export function createWorkerPool(file: string, limit = timeLimit): EnginePool {
   const pool = new Piscina({
     filename: file,
     minThreads: 1,
-    maxThreads: threads,
+    // Uploads find a thread of their own beside the identifications that run.
+    maxThreads: identificationsAtOnce + 1,
     idleTimeout: 60_000,
     resourceLimits: { maxOldGenerationSizeMb: 1500 },
   });
 
   async function run<T>(task: Task, signal: AbortSignal, transfer: readonly MessagePort[] = []): Promise<T> {
-    const limited = AbortSignal.any([signal, AbortSignal.timeout(timeLimit)]);
-    const answer = (await pool.run(task, {
-      signal: limited,
-      transferList: [...transfer] as never,
-    })) as Answer;
+    const overdue = AbortSignal.timeout(limit);
+    let answer: Answer;
+    try {
+      answer = (await pool.run(task, {
+        signal: AbortSignal.any([signal, overdue]),
+        transferList: [...transfer] as never,
+      })) as Answer;
+    } catch (error) {
+      if (overdue.aborted && !signal.aborted) throw tooLong(limit);
+      throw error;
+    }
     if ('refusal' in answer) throw new Refusal(answer.refusal.code, answer.refusal.detail);
     return answer.result as T;
   }
@@ -36,6 +43,7 @@ export function createWorkerPool(
   const never = new AbortController().signal;
   return {
     inspect: (bytes, fileName, bench) => run<Inspection>({ kind: 'inspect', bytes, fileName, bench }, never),
+    thumbnail: (bytes, center) => run<Uint8Array>({ kind: 'thumbnail', bytes, center }, never),
     pixels: (bytes) => run<Uint8Array>({ kind: 'pixels', bytes }, never),
     async identify(bytes, bench, onProgress, signal) {
       const { port1, port2 } = new MessageChannel();
@@ -51,4 +59,11 @@ export function createWorkerPool(
     },
     close: () => pool.destroy(),
   };
+}
+
+function tooLong(limit: number): Refusal {
+  return new Refusal(
+    'identification-crashed',
+    `The picture kept the engine busy for more than ${Math.round(limit / 1000)} seconds, so it was broken off and nothing was concluded. Crop the picture about the pattern or bin its pixels, and upload that.`,
+  );
 }

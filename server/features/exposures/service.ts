@@ -17,7 +17,7 @@ import {
   touchCase,
   type ExposureRow,
 } from '#server/features/exposures/store.ts';
-import { unusableSentences } from '#server/features/exposures/unusable-sentences.ts';
+import { unusableSentences } from '#server/images/unusable-sentences.ts';
 import { latestOf, queueIdentification } from '#server/features/identifications/service.ts';
 import { notFound, Refusal } from '#server/http/refusal.ts';
 import { sha256 } from '#server/storage/disk-storage.ts';
@@ -131,7 +131,7 @@ export async function pixelsOf(deps: Deps, id: string): Promise<Uint8Array> {
 
 export async function thumbnailOf(deps: Deps, id: string): Promise<Uint8Array> {
   const { row, bytes } = await originalOf(deps, id);
-  return (await deps.engine.inspect(bytes, row.exposure.fileName, row.exposure.bench)).thumbnail;
+  return deps.engine.thumbnail(bytes, row.exposure.facts.center);
 }
 
 async function presentOne(db: Database, actor: Actor, row: ExposureRow): Promise<Exposure> {
