@@ -66,7 +66,6 @@ export function createApp(deps: Deps, options: AppOptions): { app: Express; clos
       logger: deps.log,
       quietReqLogger: true,
       autoLogging: { ignore: (req) => !req.url?.startsWith('/api/') },
-      redact: ['req.headers.cookie', 'req.headers.authorization', 'res.headers["set-cookie"]'],
       customLogLevel: (_req, res, error) => ((error ?? res.statusCode >= 500) ? 'error' : 'debug'),
     }),
   );
@@ -104,6 +103,7 @@ function requireOneHandlerEach(routes: readonly Route[]): void {
     const n = routes.filter((r) => r.endpoint === endpoint).length;
     if (n !== 1) throw new Error(`the endpoint ${endpoint.name} has ${n} handlers`);
   }
+  if (routes.length !== allEndpoints.length) throw new Error('a route binds an endpoint that is not listed');
 }
 
 /** Built files are immutable under their hashed names; every other address is the one page. */

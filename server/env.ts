@@ -11,7 +11,7 @@ const schema = z.object({
     .string()
     .regex(/^\d{1,5}$/)
     .transform(Number)
-    .refine((n) => n <= 65535)
+    .refine((n) => n >= 1 && n <= 65535)
     .default(4817),
   HOST: z
     .string()
@@ -26,16 +26,19 @@ const schema = z.object({
   BASE_URL: z.url({ protocol: /^https?$/ }).optional(),
   SESSION_SECRET: z.string().min(32).optional(),
   DEMO: z.enum(['on', 'off']).default('on'),
-  LABORATORY: text('Laboratory').optional(),
+  LABORATORY: z.string().trim().min(1).max(200).optional(),
   MAIL_SERVER: z
     .string()
     .regex(/^smtps?:\/\//)
     .optional(),
-  MAIL_FROM: text('fringeward@localhost'),
+  MAIL_FROM: text('fringeward@localhost').refine((from) =>
+    /^[^\s@]+@[^\s@]+$|^[^<>]*<[^\s@<>]+@[^\s@<>]+>$/.test(from),
+  ),
+  LOG_LEVEL: z.enum(['silent', 'fatal', 'error', 'warn', 'info', 'debug', 'trace']).default('warn'),
 });
 
 const mends: Record<string, string> = {
-  PORT: 'PORT must be a whole number from 0 to 65535, such as 4817.',
+  PORT: 'PORT must be a whole number from 1 to 65535, such as 4817.',
   HOST: 'HOST must be an address or a host name, such as 127.0.0.1.',
   DATA_DIR: 'DATA_DIR must name a folder, such as ./data.',
   DATABASE_URL:
@@ -46,7 +49,8 @@ const mends: Record<string, string> = {
   LABORATORY: 'LABORATORY must be a name of at most 200 characters.',
   MAIL_SERVER:
     'MAIL_SERVER must be an address such as smtp://mail.example.org:25; leave it out to keep mail in the outbox.',
-  MAIL_FROM: 'MAIL_FROM must be a mail address.',
+  MAIL_FROM: 'MAIL_FROM must be a mail address such as fringes@example.org.',
+  LOG_LEVEL: 'LOG_LEVEL must be one of silent, fatal, error, warn, info, debug, trace.',
 };
 
 export interface Settings {
@@ -60,6 +64,7 @@ export interface Settings {
   readonly laboratory: string;
   readonly mailServer: string | undefined;
   readonly mailFrom: string;
+  readonly logLevel: string;
 }
 
 /** Reads the settings once. Answers either them or one sentence per wrong setting. */
@@ -84,11 +89,12 @@ export function readSettings(environment: Record<string, string | undefined>): S
     host: e.HOST,
     dataDir: e.DATA_DIR,
     databaseUrl: e.DATABASE_URL,
-    baseUrl: e.BASE_URL ?? `http://${host}:${e.PORT}`,
+    baseUrl: e.BASE_URL?.replace(/\/+$/, '') ?? `http://${host}:${e.PORT}`,
     sessionSecret: e.SESSION_SECRET,
     demo: e.DEMO === 'on',
-    laboratory: e.LABORATORY ?? (e.DEMO === 'on' ? 'Harrowgate Aperture Laboratory (demo)' : 'Laboratory'),
+    laboratory: e.LABORATORY ?? (e.DEMO === 'on' ? 'Demo laboratory' : 'Laboratory'),
     mailServer: e.MAIL_SERVER,
     mailFrom: e.MAIL_FROM,
+    logLevel: e.LOG_LEVEL,
   };
 }

@@ -3,50 +3,54 @@ import { mkdir, readFile, writeFile } from 'node:fs/promises';
 import { createServer } from 'node:http';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
-import { pino } from 'pino';
 import { allJobs, createApp } from '#server/app.ts';
 import { connectEmbedded, connectServer } from '#server/db/client.ts';
-import { FolderInUse, lockDataFolder } from '#server/db/data-folder-lock.ts';
+import { DataInUse, lockDataFolder } from '#server/db/data-folder-lock.ts';
+import { lockDatabase } from '#server/db/database-lock.ts';
 import { migrateDatabase } from '#server/db/migrate.ts';
 import { loadDemo } from '#server/demo/load-demo.ts';
+import { requireKind, WrongKind } from '#server/demo/require-kind.ts';
 import type { Deps } from '#server/deps.ts';
 import { readSettings, type Settings } from '#server/env.ts';
 import { hasPeople } from '#server/features/people/service.ts';
 import { FirstAdministratorCode } from '#server/features/session/first-administrator.ts';
 import { createQueue } from '#server/jobs/queue.ts';
+import { createLog } from '#server/log.ts';
+import { startTrouble } from '#server/start-trouble.ts';
 import { diskStorage } from '#server/storage/disk-storage.ts';
 import { createWorkerPool } from '#server/workers/worker-pool.ts';
 
 const here = (path: string) => fileURLToPath(new URL(path, import.meta.url));
 const say = (text: string) => process.stdout.write(`${text}\n`);
+const complain = (text: string) => process.stderr.write(`${text}\n`);
 
-function refuse(sentences: readonly string[]): never {
-  for (const sentence of sentences) process.stderr.write(`${sentence}\n`);
+const settings = readSettings(process.env);
+if (!('port' in settings)) {
+  for (const sentence of settings) complain(sentence);
   process.exit(2);
 }
+const log = createLog(settings.logLevel);
 
 /** What was opened is closed in reverse order. */
 const closers: (() => Promise<unknown> | void)[] = [];
-let closing = false;
+let closing: Promise<void> | undefined;
 
-async function close(code: number): Promise<never> {
-  if (!closing) {
-    closing = true;
+function close(): Promise<void> {
+  return (closing ??= (async () => {
     for (const closer of closers.reverse()) {
       try {
         await closer();
       } catch (error) {
-        process.stderr.write(`While closing: ${(error as Error).message}\n`);
+        log.error({ err: error }, 'closing met a fault');
       }
     }
-  }
-  process.exit(code);
+  })());
 }
 
 /** Made once and kept, so that sessions outlive a restart. */
-async function sessionSecret(settings: Settings): Promise<string> {
-  if (settings.sessionSecret) return settings.sessionSecret;
-  const file = join(settings.dataDir, 'session-secret');
+async function sessionSecret({ sessionSecret: given, dataDir }: Settings): Promise<string> {
+  if (given) return given;
+  const file = join(dataDir, 'session-secret');
   try {
     const kept = (await readFile(file, 'utf8')).trim();
     if (kept.length >= 32) return kept;
@@ -58,19 +62,29 @@ async function sessionSecret(settings: Settings): Promise<string> {
   return made;
 }
 
+async function connect({ databaseUrl, dataDir }: Settings) {
+  if (databaseUrl === undefined) {
+    const client = await connectEmbedded(dataDir);
+    closers.push(() => client.close());
+    return client;
+  }
+  const client = connectServer(databaseUrl);
+  closers.push(() => client.close());
+  closers.push(await lockDatabase(client.pool));
+  return client;
+}
+
 async function start(settings: Settings): Promise<void> {
-  const log = pino({ level: process.env['LOG_LEVEL'] ?? 'warn' });
   await mkdir(settings.dataDir, { recursive: true });
   closers.push(await lockDataFolder(settings.dataDir));
-  const client = settings.databaseUrl
-    ? connectServer(settings.databaseUrl)
-    : await connectEmbedded(settings.dataDir);
-  closers.push(() => client.close());
+  const client = await connect(settings);
   await migrateDatabase(client.db);
+  await requireKind(client.db, settings.demo);
   const engine = createWorkerPool(here('./identify.worker.js'));
   closers.push(() => engine.close());
   const queue = await createQueue(client.pool, log);
   closers.push(() => queue.stop());
+  const { baseUrl, laboratory, demo, mailServer, mailFrom } = settings;
   const deps: Deps = {
     db: client.db,
     storage: diskStorage(join(settings.dataDir, 'pictures')),
@@ -79,27 +93,18 @@ async function start(settings: Settings): Promise<void> {
     clock: () => new Date(),
     newId: randomUUID,
     log,
-    settings: {
-      baseUrl: settings.baseUrl,
-      laboratory: settings.laboratory,
-      demo: settings.demo,
-      mailServer: settings.mailServer,
-      mailFrom: settings.mailFrom,
-    },
+    settings: { baseUrl, laboratory, demo, mailServer, mailFrom },
   };
   await queue.start(allJobs(deps));
-  let firstCode: FirstAdministratorCode | undefined;
-  if (settings.demo) {
-    say('Preparing the demo laboratory …');
-    await loadDemo(deps);
-  } else if (!(await hasPeople(deps.db))) firstCode = new FirstAdministratorCode();
-  const { app, close: closeSessions } = createApp(deps, {
+  if (demo) await loadDemo(deps, () => say('Loading the demo laboratory …'));
+  const firstCode = (await hasPeople(deps.db)) ? undefined : new FirstAdministratorCode();
+  const { app, close: closeApp } = createApp(deps, {
     pool: client.pool,
     sessionSecret: await sessionSecret(settings),
     firstCode,
     pages: here('../client'),
   });
-  closers.push(closeSessions);
+  closers.push(closeApp);
   const server = createServer(app);
   server.requestTimeout = 5 * 60_000;
   await new Promise<void>((resolve, reject) => {
@@ -114,23 +119,25 @@ async function start(settings: Settings): Promise<void> {
         setTimeout(() => server.closeAllConnections(), 3000).unref();
       }),
   );
-  if (firstCode)
-    say(`Open ${settings.baseUrl} and create the administrator with the one-time code ${firstCode.code}`);
-  say(`Fringeward is ready: ${settings.baseUrl}`);
+  if (firstCode) say(`Open ${baseUrl} and create the administrator with the one-time code ${firstCode.code}`);
+  say(`Fringeward is ready: ${baseUrl}`);
 }
 
-const settings = readSettings(process.env);
-if (!('port' in settings)) refuse(settings);
-for (const signal of ['SIGTERM', 'SIGINT'] as const) process.on(signal, () => void close(0));
-start(settings).catch((error: unknown) => {
-  if (error instanceof FolderInUse) refuse([error.message]);
-  if ((error as NodeJS.ErrnoException).code === 'EADDRINUSE')
-    process.stderr.write(
-      `Port ${settings.port} is taken by another program. Stop it, or set PORT to another number.\n`,
-    );
-  else
-    process.stderr.write(
-      `Fringeward could not start: ${error instanceof Error ? (error.stack ?? error.message) : String(error)}\n`,
-    );
-  void close(1);
+for (const signal of ['SIGTERM', 'SIGINT'] as const)
+  process.on(signal, () => void close().then(() => process.exit(0)));
+process.on('unhandledRejection', (error) =>
+  log.error({ err: error }, 'a promise broke and nobody was waiting'),
+);
+process.on('uncaughtException', (error) => {
+  log.fatal({ err: error }, 'the server broke');
+  void close().then(() => process.exit(1));
+});
+
+start(settings).catch(async (error: unknown) => {
+  // A signal during the start closes what the start still uses.
+  if (closing) return;
+  const refused = error instanceof DataInUse || error instanceof WrongKind;
+  complain(refused ? error.message : startTrouble(error, settings));
+  await close();
+  process.exit(refused ? 2 : 1);
 });

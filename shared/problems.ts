@@ -4,6 +4,7 @@ import { z } from 'zod';
 export const problems = {
   'invalid-input': { status: 422, title: 'Some values need a correction' },
   'malformed-request': { status: 400, title: 'The request could not be read' },
+  'request-too-large': { status: 413, title: 'The request is too large' },
   'not-signed-in': { status: 401, title: 'Sign in first' },
   'wrong-credentials': { status: 401, title: 'E-mail or password is not right' },
   'wrong-password': { status: 403, title: 'The password is not right' },

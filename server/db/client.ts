@@ -25,7 +25,7 @@ export function connectServer(url: string): DatabaseClient {
 /** The embedded database, on disk or (without a folder) in memory. */
 export async function connectEmbedded(folder?: string): Promise<DatabaseClient> {
   const lite = folder === undefined ? await PGlite.create() : await openFolder(folder);
-  const pool = new pg.Pool(withoutTypeParsers(createPgConfig(lite)) as unknown as pg.PoolConfig);
+  const pool = new pg.Pool(withoutTypeParsers(createPgConfig(lite)));
   pool.on('error', () => undefined);
   return {
     db: drizzle(pool),

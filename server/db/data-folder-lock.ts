@@ -1,64 +1,120 @@
-import { mkdir, readFile, rm, writeFile } from 'node:fs/promises';
+import { mkdir, readFile, rename, rm, stat, writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
+import { setTimeout as sleep } from 'node:timers/promises';
 import lockfile from 'proper-lockfile';
 
-/** Another process holds the data folder. */
-export class FolderInUse extends Error {}
+/** Another process holds the data folder (or the database). */
+export class DataInUse extends Error {}
+
+interface Owner {
+  readonly pid: number;
+  /** When the process began, in the kernel's count: tells it from a later process of the same number. */
+  readonly began: string | null;
+  readonly since: string;
+}
 
 /**
  * Takes the data folder for this process alone: two processes on one embedded database would destroy it. A lock whose
- * process is dead is taken over at once. Answers the release. Throws `FolderInUse` while another process lives.
+ * process is dead is taken over at once. Answers the release. Throws `DataInUse` while another process lives.
  */
 export async function lockDataFolder(folder: string): Promise<() => Promise<void>> {
-  await mkdir(folder, { recursive: true });
-  const ownerFile = join(folder, 'owner.json');
-  const lockDir = join(folder, 'owner.lock');
+  const paths = {
+    owner: join(folder, 'owner.json'),
+    lock: join(folder, 'owner.lock'),
+    takeover: join(folder, 'owner.takeover'),
+  };
   const options = {
-    lockfilePath: lockDir,
-    stale: 60_000,
-    update: 10_000,
+    lockfilePath: paths.lock,
+    // Dead owners are known by their process, so age says nothing here.
+    stale: 24 * 3600_000,
+    update: 60_000,
     realpath: false,
     onCompromised: () => undefined,
   };
-  for (let attempt = 0; ; attempt++) {
+  let unnamed = 0;
+  for (;;) {
     try {
       const release = await lockfile.lock(folder, options);
-      await writeFile(ownerFile, JSON.stringify({ pid: process.pid, since: new Date().toISOString() }));
+      await writeOwner(paths.owner);
       return async () => {
-        await rm(ownerFile, { force: true });
+        await rm(paths.owner, { force: true });
         await release();
       };
     } catch (error) {
       if ((error as NodeJS.ErrnoException).code !== 'ELOCKED') throw error;
-      const owner = await readOwner(ownerFile);
-      // A process killed between lock and record leaves no owner; a moment later that is certain.
-      if (attempt < 20 && (owner === undefined || !isAlive(owner.pid))) {
-        if (owner !== undefined || attempt >= 10) await rm(lockDir, { recursive: true, force: true });
-        else await new Promise((resolve) => setTimeout(resolve, 100));
-        continue;
-      }
-      throw new FolderInUse(
-        `The data folder ${folder} is in use by process ${owner?.pid ?? 'unknown'}${owner ? ` since ${owner.since}` : ''}. ` +
+    }
+    const owner = await readOwner(paths.owner);
+    if (owner && (await isAlive(owner)))
+      throw new DataInUse(
+        `The data folder ${folder} is in use by process ${owner.pid} since ${owner.since}. ` +
           'Stop that process first, or set DATA_DIR to another folder.',
       );
+    // A process killed between the lock and its name leaves none; a moment later that is certain.
+    if (owner || ++unnamed > 30) {
+      await takeOver(paths, owner);
+      unnamed = 0;
     }
+    await sleep(100);
   }
 }
 
-async function readOwner(file: string): Promise<{ pid: number; since: string } | undefined> {
+/** Removes a dead process's lock; of several who want to, one does, so that nobody removes the next one's. */
+async function takeOver(
+  paths: { owner: string; lock: string; takeover: string },
+  dead: Owner | undefined,
+): Promise<void> {
   try {
-    return JSON.parse(await readFile(file, 'utf8')) as { pid: number; since: string };
+    await mkdir(paths.takeover);
+  } catch (error) {
+    if ((error as NodeJS.ErrnoException).code !== 'EEXIST') throw error;
+    const begun = (await stat(paths.takeover).catch(() => undefined))?.mtimeMs ?? Date.now();
+    if (Date.now() - begun > 5000) await rm(paths.takeover, { recursive: true, force: true });
+    return;
+  }
+  try {
+    const owner = await readOwner(paths.owner);
+    if (owner?.pid !== dead?.pid || owner?.since !== dead?.since) return;
+    await rm(paths.owner, { force: true });
+    await rm(paths.lock, { recursive: true, force: true });
+  } finally {
+    await rm(paths.takeover, { recursive: true, force: true });
+  }
+}
+
+async function writeOwner(file: string): Promise<void> {
+  const owner: Owner = {
+    pid: process.pid,
+    began: await beginningOf(process.pid),
+    since: new Date().toISOString(),
+  };
+  await writeFile(`${file}.new`, JSON.stringify(owner));
+  await rename(`${file}.new`, file);
+}
+
+async function readOwner(file: string): Promise<Owner | undefined> {
+  try {
+    return JSON.parse(await readFile(file, 'utf8')) as Owner;
   } catch {
     return undefined;
   }
 }
 
-function isAlive(pid: number): boolean {
-  if (pid === process.pid) return false;
+async function isAlive(owner: Owner): Promise<boolean> {
   try {
-    process.kill(pid, 0);
-    return true;
+    process.kill(owner.pid, 0);
   } catch (error) {
-    return (error as NodeJS.ErrnoException).code === 'EPERM';
+    if ((error as NodeJS.ErrnoException).code !== 'EPERM') return false;
+  }
+  const began = await beginningOf(owner.pid);
+  return owner.began === null || began === null || began === owner.began;
+}
+
+/** Field 22 of Linux's `/proc/<pid>/stat`; null where there is no such file. */
+async function beginningOf(pid: number): Promise<string | null> {
+  try {
+    const line = await readFile(`/proc/${pid}/stat`, 'utf8');
+    return line.slice(line.lastIndexOf(')') + 2).split(' ')[19] ?? null;
+  } catch {
+    return null;
   }
 }

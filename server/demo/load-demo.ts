@@ -22,8 +22,9 @@ import { caseDraftSchema, type Case } from '#shared/contracts/cases.ts';
  * Loads the demo laboratory into an installation that is empty or whose first start was killed: every step looks first
  * whether it is done already. Needs the job queue at work, since the identifications are real ones.
  */
-export async function loadDemo(deps: Deps): Promise<void> {
+export async function loadDemo(deps: Deps, onBegin: () => void = () => undefined): Promise<void> {
   if (await findLaboratory(deps.db)) return;
+  onBegin();
   await loadPeople(deps);
   const administrator = await requireActor(deps, demoPeople.administrator.id);
   const existing = new Set((await allBenches(deps, administrator)).map((bench) => bench.id));

@@ -2,7 +2,7 @@ import { randomUUID } from 'node:crypto';
 import type { ErrorRequestHandler } from 'express';
 import { MulterError } from 'multer';
 import type { Logger } from 'pino';
-import { Refusal } from '#server/http/refusal.ts';
+import { notFound, Refusal } from '#server/http/refusal.ts';
 import { pictureLimits } from '#shared/contracts/exposures.ts';
 import { problems, type Problem, type ProblemCode } from '#shared/problems.ts';
 
@@ -51,13 +51,18 @@ function asRefusal(error: unknown): Refusal | undefined {
           'malformed-request',
           'Send one file in the field "file", with the form fields before it.',
         );
-  const type = (error as { type?: unknown } | null)?.type;
+  if (error instanceof URIError) return new Refusal('malformed-request', 'The address could not be read.');
+  const { type, status } = (error ?? {}) as { type?: unknown; status?: unknown };
   if (type === 'entity.too.large')
-    return new Refusal('malformed-request', 'The request is larger than 200 kB.');
+    return new Refusal('request-too-large', 'The request is larger than 200 kB. Shorten the longest text.');
   if (type === 'entity.parse.failed')
     return new Refusal('malformed-request', 'The request body is not valid JSON.');
-  if (typeof type === 'string' && (error as { status?: number }).status === 400)
-    return new Refusal('malformed-request', 'The request could not be read.');
-  if (error instanceof URIError) return new Refusal('malformed-request', 'The address could not be read.');
+  // What the parsers and the file server below refuse carries a status of its own.
+  if (status === 404) return notFound('file');
+  if (typeof status === 'number' && status >= 400 && status < 500)
+    return new Refusal(
+      'malformed-request',
+      'The request could not be read: its form, encoding or length is wrong.',
+    );
   return undefined;
 }

@@ -1,5 +1,5 @@
 import type { Request, RequestHandler, Response, Router } from 'express';
-import { z } from 'zod';
+import type { z } from 'zod';
 import type { Actor } from '#server/actor.ts';
 import { Refusal } from '#server/http/refusal.ts';
 import type { Endpoint } from '#shared/contracts/endpoint.ts';
@@ -32,7 +32,7 @@ export function route<E extends Endpoint>(
   handle: Handler<E>,
   before: readonly RequestHandler[] = [],
 ): Route {
-  return { endpoint, before, handle: handle as unknown as Route['handle'] };
+  return { endpoint, before, handle: handle };
 }
 
 /** Mounts routes on a router: access check, parse in, handle, parse out. */
@@ -42,7 +42,7 @@ export function mount(router: Router, routes: readonly Route[]): void {
     router[method](endpoint.path, checkAccess(endpoint), ...before, async (req: Request, res: Response) => {
       const call: Call<Endpoint> = {
         actor: req.user as Actor,
-        maybeActor: req.user as Actor | undefined,
+        maybeActor: req.user,
         params: parseParams(endpoint.params, req.params),
         query: parseInput(endpoint.query, req.query),
         body: endpoint.bodyKind === 'none' ? {} : parseInput(endpoint.body, req.body ?? {}),
@@ -59,7 +59,7 @@ export function mount(router: Router, routes: readonly Route[]): void {
 function checkAccess(endpoint: Endpoint): RequestHandler {
   return (req, _res, next) => {
     if (endpoint.access === 'anyone') return next();
-    const actor = req.user as Actor | undefined;
+    const actor = req.user;
     if (!actor)
       throw new Refusal('not-signed-in', 'Your session has ended or never began. Sign in and try again.');
     if (endpoint.access !== 'signed-in' && !permits(actor.roles, endpoint.access))
@@ -82,12 +82,18 @@ function parseParams(schema: z.ZodType, input: unknown): unknown {
 /** All issues at once, each at its field, at most fifty. */
 function parseInput(schema: z.ZodType, input: unknown): unknown {
   const parsed = schema.safeParse(input);
-  if (parsed.success) return parsed.data;
-  const errors: FieldError[] = parsed.error.issues.slice(0, 50).map((issue) => ({
-    pointer:
-      '#' + issue.path.map((step) => '/' + String(step).replaceAll('~', '~0').replaceAll('/', '~1')).join(''),
-    detail: issue.message,
-  }));
+  const unstorable = unstorablePaths(input);
+  if (parsed.success && unstorable.length === 0) return parsed.data;
+  const errors: FieldError[] = [
+    ...unstorable.map((path) => ({
+      pointer: pointerTo(path),
+      detail: 'This holds characters that are no text (such as U+0000). Remove them.',
+    })),
+    ...(parsed.error?.issues ?? []).map((issue) => ({
+      pointer: pointerTo(issue.path),
+      detail: issue.message,
+    })),
+  ].slice(0, 50);
   const many = errors.length > 1;
   throw new Refusal(
     'invalid-input',
@@ -96,4 +102,16 @@ function parseInput(schema: z.ZodType, input: unknown): unknown {
       : (errors[0]?.detail ?? 'A value needs a correction.'),
     errors,
   );
+}
+
+function pointerTo(path: readonly PropertyKey[]): string {
+  return '#' + path.map((step) => '/' + String(step).replaceAll('~', '~0').replaceAll('/', '~1')).join('');
+}
+
+/** Where the input holds text that no database stores (U+0000, halves of surrogate pairs) or nests without end. */
+function unstorablePaths(input: unknown, path: readonly string[] = []): (readonly string[])[] {
+  if (typeof input === 'string') return /[\u0000\p{Cs}]/u.test(input) ? [path] : [];
+  if (typeof input !== 'object' || input === null) return [];
+  if (path.length > 20) return [path];
+  return Object.entries(input).flatMap(([key, value]) => unstorablePaths(value, [...path, key]));
 }

@@ -1,4 +1,4 @@
-import type { RequestHandler } from 'express';
+import type { Request, RequestHandler } from 'express';
 import { rateLimit, ipKeyGenerator } from 'express-rate-limit';
 import helmet from 'helmet';
 import { Refusal } from '#server/http/refusal.ts';
@@ -56,15 +56,17 @@ function isOwn(origin: string, hosts: readonly string[]): boolean {
   }
 }
 
-/** At most `limit` failed attempts a quarter of an hour for one address and one account. */
-export function attemptLimit(limit: number, accountOf: (body: unknown) => string): RequestHandler {
+/** At most `limit` failed attempts a quarter of an hour from one address on one account (whatever `accountOf` tells apart). */
+export function attemptLimit(limit: number, accountOf: (req: Request) => string): RequestHandler {
   return rateLimit({
     windowMs: 15 * 60_000,
     limit,
     skipSuccessfulRequests: true,
+    // A missing field or a stale page is no guess at a secret.
+    requestWasSuccessful: (_req, res) => res.statusCode !== 401 && res.statusCode !== 403,
     standardHeaders: 'draft-8',
     legacyHeaders: false,
-    keyGenerator: (req) => `${ipKeyGenerator(req.ip ?? '')} ${accountOf(req.body)}`,
+    keyGenerator: (req) => `${ipKeyGenerator(req.ip ?? '')} ${accountOf(req)}`,
     handler: (_req, _res, next) =>
       next(
         new Refusal(

@@ -1,5 +1,5 @@
 import type { Request, RequestHandler } from 'express';
-import multer from 'multer';
+import multer, { MulterError } from 'multer';
 import { Refusal } from '#server/http/refusal.ts';
 import { pictureLimits } from '#shared/contracts/exposures.ts';
 
@@ -9,7 +9,17 @@ const receive = multer({
 });
 
 /** Takes one file of the field `file`, within the limits, before the form fields are parsed. */
-export const oneFile: RequestHandler = receive.single('file');
+export const oneFile: RequestHandler = (req, res, next) =>
+  receive.single('file')(req, res, (error: unknown) =>
+    next(
+      error === undefined || error === null || error instanceof MulterError
+        ? error
+        : new Refusal(
+            'malformed-request',
+            'The upload broke off or is not a multipart form. Nothing was stored; send the file again.',
+          ),
+    ),
+  );
 
 /** The file that came, its name as people write it and without folders. Throws a Refusal when none did. */
 export function fileOf(req: Request): { name: string; bytes: Uint8Array } {
@@ -23,6 +33,6 @@ export function fileOf(req: Request): { name: string; bytes: Uint8Array } {
 
 function cleanName(name: string): string {
   const base = name.split(/[\\/]/).pop() ?? '';
-  // eslint-disable-next-line no-control-regex
+
   return base.replace(/[\u0000-\u001f\u007f]/g, '').slice(-180) || 'picture';
 }

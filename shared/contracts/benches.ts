@@ -1,7 +1,13 @@
 import { z } from 'zod';
 import { endpoint } from '#shared/contracts/endpoint.ts';
 import { personRefSchema } from '#shared/contracts/people.ts';
-import { idParam, requiredLineSchema, lineSchema, timestampSchema } from '#shared/contracts/paging.ts';
+import {
+  idParam,
+  requiredLineSchema,
+  lineSchema,
+  timestampSchema,
+  versionSchema,
+} from '#shared/contracts/paging.ts';
 
 /** A value in SI units with its standard uncertainty. */
 export const measuredSchema = z.object({ value: z.number(), u: z.number() });
@@ -98,6 +104,6 @@ export const editBench = endpoint({
   path: '/api/benches/:benchId',
   access: 'edit-benches',
   params: idParam('benchId'),
-  body: benchDraftSchema.safeExtend({ version: z.number().int() }),
+  body: benchDraftSchema.safeExtend({ version: versionSchema }),
   response: benchSchema,
 });

@@ -12,6 +12,7 @@ import {
   requiredLineSchema,
   textSchema,
   timestampSchema,
+  versionSchema,
 } from '#shared/contracts/paging.ts';
 import { personRefSchema } from '#shared/contracts/people.ts';
 
@@ -135,7 +136,7 @@ export const editCase = endpoint({
   path: '/api/cases/:caseId',
   access: 'edit-cases',
   params: idParam('caseId'),
-  body: caseDraftSchema.extend({ version: z.number().int() }),
+  body: caseDraftSchema.extend({ version: versionSchema }),
   response: caseSchema,
 });
 

@@ -17,6 +17,9 @@ export function pageOf<T extends z.ZodType>(row: T) {
 
 export const idParam = <K extends string>(key: K) => z.object({ [key]: z.uuid() } as Record<K, z.ZodUUID>);
 
+/** The version that an edit was made on; the database counts in 32 bits. */
+export const versionSchema = z.number().int().min(1).max(2_147_483_647);
+
 export const timestampSchema = z.iso.datetime();
 
 /** A short line of text: trimmed, no control characters. */

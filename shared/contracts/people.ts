@@ -1,7 +1,7 @@
 import { z } from 'zod';
 import { roleSchema } from '#shared/permissions.ts';
 import { endpoint } from '#shared/contracts/endpoint.ts';
-import { idParam, requiredLineSchema, timestampSchema } from '#shared/contracts/paging.ts';
+import { idParam, requiredLineSchema, timestampSchema, versionSchema } from '#shared/contracts/paging.ts';
 
 export const personRefSchema = z.object({ id: z.uuid(), name: z.string() });
 export type PersonRef = z.infer<typeof personRefSchema>;
@@ -43,7 +43,7 @@ export const editPersonSchema = z.object({
   name: requiredLineSchema(80, 'a name'),
   roles: rolesSchema,
   active: z.boolean(),
-  version: z.number().int(),
+  version: versionSchema,
 });
 
 export const listPeople = endpoint({

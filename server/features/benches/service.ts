@@ -8,6 +8,7 @@ import {
   findBench,
   insertBench,
   isNameTaken,
+  lockBenches,
   selectBenches,
   updateBench,
 } from '#server/features/benches/store.ts';
@@ -32,6 +33,7 @@ export async function createBench(
 ): Promise<Bench> {
   return deps.db.transaction(async (tx) => {
     const id = fixedId ?? deps.newId();
+    await lockBenches(tx);
     await requireFreeName(tx, input.name, id);
     const { name, note } = input;
     const values = benchValuesSchema.parse(input);
@@ -48,6 +50,7 @@ export async function changeBench(
   input: z.output<(typeof editBench)['body']>,
 ): Promise<Bench> {
   return deps.db.transaction(async (tx) => {
+    await lockBenches(tx);
     const before = await findBench(tx, id);
     if (!before) throw notFound('bench');
     await requireFreeName(tx, input.name, id);

@@ -1,4 +1,4 @@
-import { and, asc, eq, ne } from 'drizzle-orm';
+import { and, asc, eq, ne, sql } from 'drizzle-orm';
 import type { Database } from '#server/db/database.ts';
 import { benches } from '#server/db/schema/benches.ts';
 import { people } from '#server/db/schema/people.ts';
@@ -32,6 +32,11 @@ export async function findBench(db: Database, id: string): Promise<BenchRow | un
       .innerJoin(people, eq(people.id, benches.createdBy))
       .where(eq(benches.id, id))
   )[0];
+}
+
+/** Keeps names unique until the transaction ends. */
+export async function lockBenches(tx: Database): Promise<void> {
+  await tx.execute(sql`lock table ${benches} in share row exclusive mode`);
 }
 
 export async function isNameTaken(db: Database, name: string, exceptId: string): Promise<boolean> {

@@ -1,5 +1,12 @@
 import type { Actor } from '#server/actor.ts';
-import { leadingOf, stageOf, waitsFor, type Front, type NewestMatch } from '#server/features/cases/stage.ts';
+import {
+  isOfMatch,
+  leadingOf,
+  stageOf,
+  waitsFor,
+  type Front,
+  type NewestMatch,
+} from '#server/features/cases/stage.ts';
 import type { CaseRecord } from '#server/features/cases/store.ts';
 import type { CaseRow } from '#shared/contracts/cases.ts';
 
@@ -29,22 +36,18 @@ export function presentRow(
   match: NewestMatch | undefined,
   actor: Actor,
 ): CaseRow {
-  const stage = stageOf(front, match);
-  const ofMatch = match && ['in-review', 'returned', 'rejected', 'confirmed'].includes(stage);
-  const came =
-    match?.decidedAt &&
-    match.decider &&
-    (stage === 'returned' || stage === 'rejected' || stage === 'confirmed');
+  const stage = stageOf(record.case.state, front, match);
+  const ofMatch = match && isOfMatch(stage) ? match : undefined;
   return {
     ...presentBase(record),
     stage,
     exposureCount: front?.exposureCount ?? 0,
-    exposureId: ofMatch ? match.exposureId : (front?.exposureId ?? null),
+    exposureId: ofMatch?.exposureId ?? front?.exposureId ?? null,
     progress: stage === 'running' && front ? { share: front.share ?? 0, step: front.step ?? '' } : null,
     leading: leadingOf(stage, front, match),
     cameBack:
-      came && match.decidedAt && match.decider
-        ? { by: match.decider, at: match.decidedAt.toISOString(), reason: match.reason ?? '' }
+      ofMatch?.decidedAt && ofMatch.decider
+        ? { by: ofMatch.decider, at: ofMatch.decidedAt.toISOString(), reason: ofMatch.reason ?? '' }
         : null,
     matchId: match?.id ?? null,
     waitsForYou: waitsFor(actor, stage, match),

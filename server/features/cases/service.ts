@@ -69,7 +69,7 @@ export async function readCase(deps: Deps, actor: Actor, id: string): Promise<Ca
   const edits = permits(actor.roles, 'edit-cases');
   return {
     ...presentBase(row),
-    stage: stageOf(front, match),
+    stage: stageOf(row.case.state, front, match),
     exposures: await exposuresOfCase(deps, actor, id),
     matches: await matchesOfCase(deps, actor, id),
     can: {
@@ -97,7 +97,7 @@ export async function changeCase(
       );
     const { version, ...change } = input;
     const at = deps.clock();
-    if (!(await updateCase(tx, id, version, { ...change, updatedAt: at })))
+    if (!(await updateCase(tx, id, { state: 'open', version }, { ...change, updatedAt: at })))
       throw new Refusal(
         'stale-edit',
         `Somebody else changed ${row.case.number} meanwhile. Copy what you typed, reload to see their values, then change again.`,
@@ -113,7 +113,9 @@ export async function reopen(deps: Deps, actor: Actor, id: string, reason: strin
     if (row.case.state !== 'closed')
       throw new Refusal('wrong-state', `${row.case.number} is not closed, so there is nothing to reopen.`);
     const at = deps.clock();
-    await updateCase(tx, id, row.case.version, { state: 'open', updatedAt: at });
+    const { version } = row.case;
+    if (!(await updateCase(tx, id, { state: 'closed', version }, { state: 'open', updatedAt: at })))
+      throw new Refusal('stale-edit', `Somebody else changed ${row.case.number} meanwhile. Reload it.`);
     await record(tx, actor, at, 'reopen-case', { kind: 'case', id }, { reason });
   });
   return readCase(deps, actor, id);

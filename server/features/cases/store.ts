@@ -66,6 +66,7 @@ export async function selectFronts(db: Database, caseIds: readonly string[]) {
       state: identifications.state,
       share: identifications.share,
       step: identifications.step,
+      queuedAt: identifications.queuedAt,
       outcome: identifications.outcome,
     })
     .from(exposures)
@@ -116,16 +117,17 @@ export async function insertCase(tx: Database, row: typeof cases.$inferInsert): 
   await tx.insert(cases).values(row);
 }
 
+/** Changes a case that is still as the caller saw it; false when it is not. */
 export async function updateCase(
   tx: Database,
   id: string,
-  version: number,
+  as: { state: CaseState; version: number },
   change: Partial<typeof cases.$inferInsert>,
 ): Promise<boolean> {
   const rows = await tx
     .update(cases)
-    .set({ ...change, version: version + 1 })
-    .where(and(eq(cases.id, id), eq(cases.version, version)))
+    .set({ ...change, version: as.version + 1 })
+    .where(and(eq(cases.id, id), eq(cases.state, as.state), eq(cases.version, as.version)))
     .returning({ id: cases.id });
   return rows.length === 1;
 }

@@ -9,7 +9,7 @@ export function sendMailJob(deps: Deps): JobDefinition<{ mailId: string }> {
     name: 'send-mail',
     attempts: 8,
     concurrency: 1,
-    async run({ mailId }) {
+    async run({ mailId }, { lastAttempt }) {
       const row = await findMail(deps.db, mailId);
       if (!row || row.state === 'sent') return;
       if (deps.settings.mailServer === undefined) return markMail(deps.db, mailId, { state: 'held' });
@@ -24,7 +24,7 @@ export function sendMailJob(deps: Deps): JobDefinition<{ mailId: string }> {
         await markMail(deps.db, mailId, { state: 'sent', sentAt: deps.clock(), lastError: null });
       } catch (error) {
         await markMail(deps.db, mailId, {
-          state: 'failed',
+          state: lastAttempt ? 'failed' : 'queued',
           lastError: (error as Error).message.slice(0, 300),
         });
         throw error;

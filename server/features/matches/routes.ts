@@ -20,23 +20,10 @@ async function withEarlier(deps: Deps, actor: Actor, id: string) {
 export function matchRoutes(deps: Deps): Route[] {
   return [
     route(submitMatch, ({ actor, params, body }) => putForward(deps, actor, params.caseId, body)),
-    route(listMatches, ({ actor, query }) =>
-      reviewTable(
-        deps,
-        actor,
-        {
-          caseId: query.caseId,
-          q: query.q,
-          state: query.mine ? 'submitted' : query.state,
-          notBy: query.mine ? actor.id : undefined,
-        },
-        query.page,
-        query.pageSize,
-      ),
-    ),
+    route(listMatches, ({ actor, query }) => reviewTable(deps, actor, query)),
     route(getMatch, ({ actor, params }) => withEarlier(deps, actor, params.matchId)),
     route(decideMatch, ({ actor, params, body }) => decide(deps, actor, params.matchId, body), [
-      attemptLimit(10, () => 'decide-match'),
+      attemptLimit(10, (req) => req.user?.id ?? ''),
     ]),
   ];
 }

@@ -17,7 +17,6 @@ import {
   selectMatches,
   setCaseState,
   supersedeEarlier,
-  type MatchFilter,
 } from '#server/features/matches/store.ts';
 import { passwordIsRight } from '#server/features/people/service.ts';
 import { notFound, Refusal } from '#server/http/refusal.ts';
@@ -25,10 +24,12 @@ import {
   signatureMeanings,
   type Decision,
   type decideMatchSchema,
+  type listMatches,
   type Match,
   type MatchState,
   type submitMatchSchema,
 } from '#shared/contracts/matches.ts';
+import { permits } from '#shared/permissions.ts';
 
 const states: Record<Decision, MatchState> = { confirm: 'confirmed', return: 'returned', reject: 'rejected' };
 
@@ -162,13 +163,16 @@ export async function matchesOfCase(deps: Deps, actor: Actor, caseId: string): P
   return (await selectByCase(deps.db, caseId)).map((row) => presentMatch(row, actor));
 }
 
-export async function reviewTable(
-  deps: Deps,
-  actor: Actor,
-  filter: MatchFilter,
-  page: number,
-  pageSize: number,
-) {
+export async function reviewTable(deps: Deps, actor: Actor, query: z.output<(typeof listMatches)['query']>) {
+  const { page, pageSize, caseId, q } = query;
+  const waiting = query.mine === 'decide';
+  if (waiting && !permits(actor.roles, 'decide-matches')) return { total: 0, page, pageSize, rows: [] };
+  const filter = {
+    caseId,
+    q,
+    state: waiting ? ('submitted' as const) : query.state,
+    notBy: waiting ? actor.id : undefined,
+  };
   const { total, rows } = await selectMatches(deps.db, filter, pageSize, (page - 1) * pageSize);
   return { total, page, pageSize, rows: rows.map((row) => presentMatch(row, actor)) };
 }

@@ -34,7 +34,7 @@ function baseQuery(db: Database) {
     .leftJoin(decider, eq(decider.id, matches.decidedBy));
 }
 
-export interface MatchFilter {
+interface MatchFilter {
   readonly state?: MatchState | undefined;
   readonly caseId?: string | undefined;
   /** Leaves out what this person submitted. */

@@ -8,15 +8,19 @@ import { presentPerson } from '#server/features/people/present.ts';
 import {
   countActiveAdministrators,
   countPeople,
+  endSessions,
   findPerson,
   findPersonByEmail,
   insertPerson,
+  lockPeople,
   selectPeople,
   updatePerson,
   type PersonRow,
 } from '#server/features/people/store.ts';
 import { notFound, Refusal } from '#server/http/refusal.ts';
 import type { addPersonSchema, editPersonSchema, Person } from '#shared/contracts/people.ts';
+
+type NewPerson = Pick<PersonRow, 'name' | 'email' | 'roles' | 'passwordHash'> & { readonly id?: string };
 
 export async function listAllPeople(deps: Deps): Promise<Person[]> {
   return (await selectPeople(deps.db)).map(presentPerson);
@@ -31,13 +35,26 @@ export async function createPerson(
   return deps.db.transaction((tx) => addWithin(tx, deps, actor, { ...input, passwordHash }));
 }
 
+/** The first account of an installation; refused when there is any. */
+export async function addFirst(
+  tx: Database,
+  deps: Pick<Deps, 'newId' | 'clock'>,
+  input: NewPerson,
+): Promise<Person> {
+  await lockPeople(tx);
+  if ((await countPeople(tx)) > 0)
+    throw new Refusal('wrong-state', 'The first administrator exists already. Sign in instead.');
+  return addWithin(tx, deps, null, input);
+}
+
 /** The same inside a transaction of the caller's, with the password hashed already. */
 export async function addWithin(
   tx: Database,
   deps: Pick<Deps, 'newId' | 'clock'>,
   actor: Actor | null,
-  input: Pick<PersonRow, 'name' | 'email' | 'roles' | 'passwordHash'> & { id?: string },
+  input: NewPerson,
 ): Promise<Person> {
+  await lockPeople(tx);
   if (await findPersonByEmail(tx, input.email))
     throw new Refusal('email-taken', 'There is an account of this e-mail address already.', [
       {
@@ -74,6 +91,7 @@ export async function changePerson(
   input: z.output<typeof editPersonSchema>,
 ): Promise<Person> {
   return deps.db.transaction(async (tx) => {
+    await lockPeople(tx);
     const row = await findPerson(tx, id);
     if (!row) throw notFound('person');
     const loses =
@@ -91,16 +109,19 @@ export async function changePerson(
         'stale-edit',
         `${row.name} was changed by somebody else meanwhile. Reload, then change again.`,
       );
+    if (!input.active) await endSessions(tx, id);
     await record(tx, actor, deps.clock(), 'edit-person', { kind: 'person', id }, change);
     return presentPerson({ ...row, ...change, version: version + 1 });
   });
 }
 
+/** Ends the person's other sessions: whoever changes a password may fear that somebody else knows it. */
 export async function changeOwnPassword(
   deps: Deps,
   actor: Actor,
   current: string,
   next: string,
+  keepSession: string,
 ): Promise<void> {
   if (!(await passwordIsRight(deps.db, actor.id, current)))
     throw new Refusal('wrong-password', 'The present password is not right.', [
@@ -111,6 +132,7 @@ export async function changeOwnPassword(
     const row = await findPerson(tx, actor.id);
     if (!row || !(await updatePerson(tx, actor.id, row.version, { passwordHash })))
       throw new Refusal('stale-edit', 'Your account was changed meanwhile. Try again.');
+    await endSessions(tx, actor.id, keepSession);
     await record(tx, actor, deps.clock(), 'change-password', { kind: 'person', id: actor.id });
   });
 }

@@ -1,8 +1,21 @@
-import { and, arrayContains, asc, count, eq } from 'drizzle-orm';
+import { and, arrayContains, asc, count, eq, ne, sql } from 'drizzle-orm';
 import type { Database } from '#server/db/database.ts';
 import { people } from '#server/db/schema/people.ts';
+import { sessions } from '#server/db/schema/sessions.ts';
 
 export type PersonRow = typeof people.$inferSelect;
+
+/** Keeps what depends on all people (one address, one account; a last administrator) true until the transaction ends. */
+export async function lockPeople(tx: Database): Promise<void> {
+  await tx.execute(sql`lock table ${people} in share row exclusive mode`);
+}
+
+/** Ends the person's sessions, all or all but one. */
+export async function endSessions(tx: Database, personId: string, exceptSid = ''): Promise<void> {
+  await tx
+    .delete(sessions)
+    .where(and(sql`${sessions.sess} -> 'passport' ->> 'user' = ${personId}`, ne(sessions.sid, exceptSid)));
+}
 
 export async function insertPerson(db: Database, person: PersonRow): Promise<void> {
   await db.insert(people).values(person);

@@ -1,3 +1,4 @@
+import type { Request } from 'express';
 import type { Deps } from '#server/deps.ts';
 import { demoAccounts } from '#server/demo/demo-people.ts';
 import { changeOwnPassword, hasPeople } from '#server/features/people/service.ts';
@@ -16,10 +17,10 @@ import {
   signOut,
 } from '#shared/contracts/session.ts';
 
-const accountOf = (body: unknown) =>
-  String((body as { email?: unknown } | null)?.email ?? '')
-    .trim()
-    .toLowerCase();
+function accountOf(req: Request): string {
+  const email = (req.body as { email?: unknown } | undefined)?.email;
+  return typeof email === 'string' ? email.trim().toLowerCase() : '';
+}
 
 export function sessionRoutes(deps: Deps, firstCode: FirstAdministratorCode | undefined): Route[] {
   return [
@@ -36,7 +37,8 @@ export function sessionRoutes(deps: Deps, firstCode: FirstAdministratorCode | un
         await beginSession(req, actor);
         return presentSession(deps, actor);
       },
-      [attemptLimit(10, accountOf)],
+      // Ten for one account, and a hundred for one address whatever the accounts.
+      [attemptLimit(100, () => ''), attemptLimit(10, accountOf)],
     ),
     route(signOut, async ({ req }) => endSession(req)),
     route(getSignInOptions, async () => ({
@@ -50,12 +52,13 @@ export function sessionRoutes(deps: Deps, firstCode: FirstAdministratorCode | un
         await beginSession(req, actor);
         return presentSession(deps, actor);
       },
-      [attemptLimit(10, () => 'first-administrator')],
+      [attemptLimit(10, () => '')],
     ),
     route(
       changePassword,
-      ({ actor, body }) => changeOwnPassword(deps, actor, body.currentPassword, body.newPassword),
-      [attemptLimit(10, () => 'change-password')],
+      ({ actor, body, req }) =>
+        changeOwnPassword(deps, actor, body.currentPassword, body.newPassword, req.sessionID),
+      [attemptLimit(10, (req) => req.user?.id ?? '')],
     ),
   ];
 }

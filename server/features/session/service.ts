@@ -1,9 +1,10 @@
 import type { z } from 'zod';
 import { hash } from '@node-rs/argon2';
 import type { Actor } from '#server/actor.ts';
+import { insertLaboratory } from '#server/db/laboratory-store.ts';
 import type { Deps } from '#server/deps.ts';
 import type { FirstAdministratorCode } from '#server/features/session/first-administrator.ts';
-import { addWithin, hasPeople } from '#server/features/people/service.ts';
+import { addFirst, hasPeople } from '#server/features/people/service.ts';
 import { Refusal } from '#server/http/refusal.ts';
 import type { firstAdministratorSchema, Session } from '#shared/contracts/session.ts';
 import { permissions, permits, type Permission } from '#shared/permissions.ts';
@@ -38,14 +39,15 @@ export async function makeFirstAdministrator(
     ]);
   const passwordHash = await hash(input.password);
   const person = await deps.db.transaction(async (tx) => {
-    if (await hasPeople(tx))
-      throw new Refusal('wrong-state', 'The first administrator exists already. Sign in instead.');
-    return addWithin(tx, deps, null, {
-      name: input.name,
-      email: input.email,
+    const { name, email } = input;
+    const first = await addFirst(tx, deps, {
+      name,
+      email,
       passwordHash,
       roles: ['administrator', 'analyst'],
     });
+    await insertLaboratory(tx, 'own', deps.settings.laboratory, deps.clock());
+    return first;
   });
   return { id: person.id, name: person.name, email: person.email, roles: person.roles };
 }
