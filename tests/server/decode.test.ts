@@ -3,8 +3,10 @@ import { decodePicture } from '#server/images/decode.ts';
 import { setupOf } from '#server/images/setup-of.ts';
 import type { BenchValues } from '#shared/contracts/benches.ts';
 import { bmpFile, interleaved, jpegFile, withOrientation } from '#tests/support/bitmap-files.ts';
+import { badPictures } from '#tests/support/bad-pictures.ts';
 import { pngFile } from '#tests/support/png-files.ts';
 import { tiffFile } from '#tests/support/tiff-files.ts';
+import { colours, laserPicture } from '#tests/support/two-lasers.ts';
 
 const width = 48;
 const height = 40;
@@ -143,4 +145,38 @@ describe('fewer bits in a file of 16', () => {
     expect(setupOf(bench, right).darkLevel).toBeCloseTo(64, 9);
     expect(setupOf({ ...bench, darkLevel: null }, right).darkLevel).toBeNull();
   });
+});
+
+describe('a colour picture of one laser', () => {
+  it.each([
+    ['within full scale', 0.8],
+    ['with a clipped core', 8],
+  ])('gives the plane of the channel that carries it, %s', async (_, peak) => {
+    const data = colours(peak, 0.1, 0);
+    const picture = await decodePicture(pngFile({ ...laserPicture, data, channels: 3 }), 'a.png', 8);
+    expect(picture.channel).toBe('red');
+    expect(Array.from(picture.codes)).toEqual(Array.from(data.filter((_code, i) => i % 3 === 0)));
+  });
+
+  it('is not taken for two, also through a JPEG with coloured room light', async () => {
+    const data = colours(3, 0.2, 0).map((code, i) => Math.min(255, code + (i % 3 === 1 ? 18 : 9)));
+    const picture = await decodePicture(await jpegFile({ ...laserPicture, data }, 80), 'a.jpg', 8);
+    expect(picture.channel).toBe('red');
+  });
+});
+
+describe('a file that cannot be measured', () => {
+  it.each(badPictures.map((bad) => [bad.what, bad] as const))('%s is refused', async (_, bad) => {
+    const attempt = decodePicture(await bad.file(), bad.name, 16);
+    await expect(attempt).rejects.toMatchObject({ code: bad.code, message: expect.stringMatching(bad.says) });
+  });
+});
+
+describe('a name', () => {
+  it.each(['pattern', 'L=0.85', 'PATTERN.PNG', 'run.3.png'])(
+    'such as %s says nothing wrong',
+    async (name) => {
+      expect(await codesOf(pngFile({ width, height, data: deep }), name)).toEqual(Array.from(deep));
+    },
+  );
 });
