@@ -55,7 +55,13 @@ export function allJobs(deps: Deps): JobDefinition<never>[] {
 }
 
 /** The whole application over its dependencies. Refuses to be made while an endpoint has no handler, or two. */
-export function createApp(deps: Deps, options: AppOptions): { app: Express; close: () => void } {
+export function createApp(
+  deps: Deps,
+  options: AppOptions,
+  routesOf: typeof allRoutes = allRoutes,
+): { app: Express; close: () => void } {
+  const routes = routesOf(deps, options.firstCode);
+  requireOneHandlerEach(routes);
   const secure = deps.settings.baseUrl.startsWith('https:');
   const app = express();
   app.disable('x-powered-by');
@@ -86,8 +92,6 @@ export function createApp(deps: Deps, options: AppOptions): { app: Express; clos
   });
   api.use(express.json({ limit: '200kb' }));
   for (const handler of handlers) api.use(handler);
-  const routes = allRoutes(deps, options.firstCode);
-  requireOneHandlerEach(routes);
   mount(api, routes);
   app.use((req, res, next) => (req.path.startsWith('/api/') ? api(req, res, next) : next()));
   app.use('/api', () => {
