@@ -1,6 +1,7 @@
 import type { Request, RequestHandler, Response, Router } from 'express';
 import type { z } from 'zod';
 import type { Actor } from '#server/actor.ts';
+import { plainSentence } from '#server/http/plain-sentence.ts';
 import { Refusal } from '#server/http/refusal.ts';
 import type { Endpoint } from '#shared/contracts/endpoint.ts';
 import { permits } from '#shared/permissions.ts';
@@ -81,7 +82,7 @@ function parseParams(schema: z.ZodType, input: unknown): unknown {
 
 /** All issues at once, each at its field, at most fifty. */
 function parseInput(schema: z.ZodType, input: unknown): unknown {
-  const parsed = schema.safeParse(input);
+  const parsed = schema.safeParse(input, { error: plainSentence });
   const unstorable = unstorablePaths(input);
   if (parsed.success && unstorable.length === 0) return parsed.data;
   const errors: FieldError[] = [

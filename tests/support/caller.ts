@@ -64,6 +64,6 @@ export function problemIn(response: Response, code: ProblemCode): Problem {
     status: problems[code].status,
   });
   expect(problem.status).toBe(response.status);
-  expect(problem.detail).toMatch(/^[A-Z].*[.]$/s);
+  expect(problem.detail).toMatch(/^[A-Z0-9].*[.]$/s);
   return problem;
 }
