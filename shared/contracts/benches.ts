@@ -22,7 +22,7 @@ const measured = (what: string, min: number, max: number, range: string) =>
         .max(max, `The ${what} must lie between ${range}.`),
       u: z.number('Enter its standard uncertainty.').min(0, 'A standard uncertainty is never negative.'),
     })
-    .refine((q) => q.u < q.value / 2, {
+    .refine((q) => !(q.value >= min) || q.u < q.value / 2, {
       path: ['u'],
       message: `The standard uncertainty must stay below half of the ${what}.`,
     });
@@ -42,7 +42,7 @@ export const benchValuesSchema = z.object({
   pixelPitch: measured('pixel pitch', 0.2e-6, 5e-3, '0.2 µm and 5 000 µm'),
   encoding: z.enum(['linear', 'srgb']),
   /** Bits that the camera delivers; 12 in a 16-bit file means left-aligned or right-aligned data, found from the file. */
-  bitDepth: z.union([z.literal(8), z.literal(10), z.literal(12), z.literal(14), z.literal(16)]),
+  bitDepth: z.literal([8, 10, 12, 14, 16]),
   /** In codes of `bitDepth`; null where it is not known. */
   darkLevel: z.number().min(0, 'A dark level is never negative.').max(65535).nullable(),
   /** True where the camera sees the pattern reversed. */

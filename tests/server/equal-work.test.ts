@@ -5,7 +5,7 @@ import { signIn } from '#shared/contracts/session.ts';
 import { createTestApp, type TestApp } from '#tests/support/test-app.ts';
 
 vi.mock('@node-rs/argon2', async (original) => {
-  const real = await original<typeof import('@node-rs/argon2')>();
+  const real = await original<typeof argon2>();
   return { ...real, verify: vi.fn(real.verify) };
 });
 

@@ -1,9 +1,12 @@
+import type { Outcome } from '#server/engine/outcome.ts';
 import type { EnginePool } from '#server/workers/engine-pool.ts';
 import { inlineEngine } from '#server/workers/inline-engine.ts';
 
 export interface Run {
   readonly tell: (step: string, share: number) => void;
   readonly signal: AbortSignal;
+  /** Ends the run with a given outcome. */
+  readonly end: (outcome: Outcome) => void;
   /** Ends the run with the real engine's outcome. */
   readonly finish: () => void;
   readonly break: (error: Error) => void;
@@ -22,6 +25,7 @@ export function scriptedEngine(): { engine: EnginePool; nextRun: () => Promise<R
           const run: Run = {
             tell,
             signal,
+            end: resolve,
             finish: () => resolve(real.identify(bytes, bench, () => undefined, signal)),
             break: reject,
           };
