@@ -19,14 +19,16 @@ const leastCodes = 4;
 export function codeScale(codes: Uint16Array, fileDepth: 8 | 16, benchDepth: number): CodeScale {
   if (fileDepth === 8) return { bitDepth: 8, fullScale: 255, codeStep: 1 };
   const distinct = distinctCodes(codes);
-  if (distinct.length >= leastCodes) {
-    const left = cameraDepths.find((n) => distinct.every((code) => code % 2 ** (16 - n) === 0));
-    if (left) return { bitDepth: left, fullScale: 65536 - 2 ** (16 - left), codeStep: 2 ** (16 - left) };
-    const stretched = cameraDepths.find((n) => distinct.every((code) => repeatsItsHighBits(code, n)));
-    if (stretched)
-      return { bitDepth: stretched, fullScale: 65535, codeStep: Math.round(65535 / (2 ** stretched - 1)) };
-  }
+  // A few codes fall into any pattern by chance: then only the bench's own depth is looked for.
+  const depths = distinct.length >= leastCodes ? cameraDepths : cameraDepths.filter((n) => n === benchDepth);
   const top = distinct.at(-1) ?? 0;
+  const byBench = distinct.length < leastCodes && top < 2 ** benchDepth;
+  const left = depths.find((n) => distinct.every((code) => code % 2 ** (16 - n) === 0));
+  if (left && !byBench)
+    return { bitDepth: left, fullScale: 65536 - 2 ** (16 - left), codeStep: 2 ** (16 - left) };
+  const stretched = depths.find((n) => distinct.every((code) => repeatsItsHighBits(code, n)));
+  if (stretched && !byBench)
+    return { bitDepth: stretched, fullScale: 65535, codeStep: Math.round(65535 / (2 ** stretched - 1)) };
   if (benchDepth < 16 && top < 2 ** benchDepth)
     return { bitDepth: benchDepth, fullScale: 2 ** benchDepth - 1, codeStep: 1 };
   return { bitDepth: 16, fullScale: 65535, codeStep: 1 };

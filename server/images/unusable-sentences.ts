@@ -16,5 +16,5 @@ export const unusableSentences: Record<UnusableReason, string> = {
   'fringes-undersampled':
     'The fringes are finer than 3.5 pixels, so their contrast is lost. Move the camera farther away or use a longer lens and photograph it again.',
   'no-minimum-in-frame':
-    'Not a single dark fringe lies in the frame, so no size can be measured. Bring the camera nearer or use a shorter lens, so that more of the pattern is in the frame.',
+    'Not a single dark fringe lies in the frame, so no size can be measured. Bring the camera nearer or use a shorter lens, so that more of the pattern is in the frame, and photograph it again.',
 };

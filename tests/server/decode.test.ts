@@ -102,6 +102,13 @@ describe('fewer bits in a file of 16', () => {
     expect(await decodePicture(dim, 'a.png', 12)).toMatchObject({ fullScale: 65520, codeStep: 16 });
   });
 
+  it('a picture of one code is read by the bench', async () => {
+    const white = pngFile({ width, height, data: new Uint16Array(n).fill(4095 << 4) });
+    expect(await decodePicture(white, 'a.png', 12)).toMatchObject({ fullScale: 65520, codeStep: 16 });
+    const black = pngFile({ width, height, data: new Uint16Array(n) });
+    expect(await decodePicture(black, 'a.png', 12)).toMatchObject({ fullScale: 4095, codeStep: 1 });
+  });
+
   it('codes stretched to 16 bits are found from the data', async () => {
     const stretched = pngFile({ width, height, data: Uint16Array.from(flat, (code) => code * 257) });
     expect(await decodePicture(stretched, 'a.png', 16)).toMatchObject({
