@@ -84,7 +84,7 @@ async function takeOver(
 async function writeOwner(file: string): Promise<void> {
   const owner: Owner = {
     pid: process.pid,
-    began: await beginningOf(process.pid),
+    began: (await statusOf(process.pid))?.began ?? null,
     since: new Date().toISOString(),
   };
   await writeFile(`${file}.new`, JSON.stringify(owner));
@@ -105,15 +105,18 @@ async function isAlive(owner: Owner): Promise<boolean> {
   } catch (error) {
     if ((error as NodeJS.ErrnoException).code !== 'EPERM') return false;
   }
-  const began = await beginningOf(owner.pid);
-  return owner.began === null || began === null || began === owner.began;
+  const fields = await statusOf(owner.pid);
+  // A process that was killed and whose parent has not asked for it yet is dead all the same.
+  if (fields?.state === 'Z' || fields?.state === 'X') return false;
+  return owner.began === null || fields === null || fields.began === owner.began;
 }
 
-/** Field 22 of Linux's `/proc/<pid>/stat`; null where there is no such file. */
-async function beginningOf(pid: number): Promise<string | null> {
+/** Fields 3 and 22 of Linux's `/proc/<pid>/stat`; null where there is no such file. */
+async function statusOf(pid: number): Promise<{ state: string; began: string } | null> {
   try {
     const line = await readFile(`/proc/${pid}/stat`, 'utf8');
-    return line.slice(line.lastIndexOf(')') + 2).split(' ')[19] ?? null;
+    const fields = line.slice(line.lastIndexOf(')') + 2).split(' ');
+    return { state: fields[0], began: fields[19] };
   } catch {
     return null;
   }
