@@ -2,7 +2,9 @@ import { isIP } from 'node:net';
 import { resolve } from 'node:path';
 import { z } from 'zod';
 
-const loopback = ['127.0.0.1', '::1', 'localhost'];
+function isLoopback(host: string): boolean {
+  return host === 'localhost' || host === '::1' || (isIP(host) === 4 && host.startsWith('127.'));
+}
 
 const text = (fallback: string) => z.string().trim().min(1).max(200).default(fallback);
 
@@ -78,7 +80,7 @@ export function readSettings(environment: Record<string, string | undefined>): S
     return [...names].map((name) => mends[name] ?? `${name} is not right.`);
   }
   const e = parsed.data;
-  if (e.DEMO === 'on' && !loopback.includes(e.HOST) && !e.HOST.startsWith('127.'))
+  if (e.DEMO === 'on' && !isLoopback(e.HOST))
     return [
       `HOST is ${e.HOST}, but the demo laboratory has published passwords and listens on loopback only. ` +
         'Set DEMO=off to serve others, or HOST=127.0.0.1.',

@@ -33,7 +33,8 @@ export async function startServer(
   const folder = dataDir ?? (await mkdtemp(join(tmpdir(), 'fringeward-journey-')));
   const port = settings['PORT'] ?? String(await freePort());
   const child = spawn(process.execPath, ['dist/server/main.js'], {
-    env: { ...process.env, NODE_ENV: 'production', PORT: port, DATA_DIR: folder, ...settings },
+    // The test runner sets a BASE_URL of its own.
+    env: { ...process.env, NODE_ENV: 'production', BASE_URL: '', PORT: port, DATA_DIR: folder, ...settings },
     stdio: ['ignore', 'pipe', 'pipe'],
   });
   let text = '';
