@@ -1,0 +1,102 @@
+import { familyOf } from '#shared/apertures/registry.ts';
+import type { Candidate } from '#shared/contracts/identifications.ts';
+import { printQuantity } from '#shared/quantities.ts';
+import { ApertureSketch } from '#src/ui/aperture-sketch.tsx';
+import { CandidateSizes } from '#src/ui/candidate-words.tsx';
+import { classNames } from '#src/ui/class-names.ts';
+import { Measured } from '#src/ui/measured.tsx';
+
+interface CandidateListProps {
+  candidates: readonly Candidate[];
+  chosen: number;
+  onChoose: (index: number) => void;
+  /** Two may stay in play; nothing is claimed where none is. */
+  claimed: boolean;
+}
+
+/** Ranked candidates at a common scale. Radio buttons underneath: ↑ ↓ choose. */
+export function CandidateList({ candidates, chosen, onChoose, claimed }: CandidateListProps) {
+  const span = 1.3 * Math.max(...candidates.map((c) => familyOf(c.family).extent(c.values)));
+  return (
+    <fieldset>
+      <legend className="flex w-full items-baseline justify-between gap-4 border-b border-rule pb-1.5">
+        <span className="text-[13px] font-[750]">
+          {claimed ? 'Candidates' : 'Nearest shapes, not claimed'}
+        </span>
+        <span className="label ml-4 text-ink3">probability, reduced chi-square</span>
+      </legend>
+      {candidates.map((candidate, i) => (
+        <CandidateRow
+          key={`${candidate.family} ${candidate.model}`}
+          candidate={candidate}
+          rank={i + 1}
+          chosen={i === chosen}
+          span={span}
+          onChoose={() => onChoose(i)}
+        />
+      ))}
+    </fieldset>
+  );
+}
+
+interface RowProps {
+  candidate: Candidate;
+  rank: number;
+  chosen: boolean;
+  span: number;
+  onChoose: () => void;
+}
+
+function CandidateRow({ candidate: c, rank, chosen, span, onChoose }: RowProps) {
+  const family = familyOf(c.family);
+  return (
+    <label
+      className={classNames(
+        'relative flex min-h-[58px] items-center gap-3 border-b border-rule py-1.5 pr-1 has-focus-visible:outline-3 has-focus-visible:outline-ink',
+        chosen && 'bg-raised before:absolute before:inset-y-0 before:-left-3 before:w-1 before:bg-seam',
+      )}
+    >
+      <input type="radio" name="candidate" className="sr-only" checked={chosen} onChange={onChoose} />
+      <span className="w-4 shrink-0 text-right font-[680]">{rank}</span>
+      <ApertureSketch
+        family={c.family}
+        values={c.values}
+        orientation={c.orientation?.value ?? null}
+        span={span}
+        size={44}
+      />
+      <span className="min-w-0 flex-1">
+        <span className="name block">{family.label}</span>
+        <span className="block text-ink2">
+          <CandidateSizes candidate={c} withU />
+          {c.orientation ? (
+            <>
+              , <Measured value={c.orientation.value} u={c.orientation.u} unit="deg" />{' '}
+              <span className="label text-ink3">
+                repeats every {printQuantity(c.orientationPeriod ?? 0, 'deg', 3)}
+              </span>
+            </>
+          ) : null}
+        </span>
+      </span>
+      <span className="shrink-0 text-right">
+        <span className="block font-[720]">{printProbability(c.probability)}</span>
+        <span className="label block text-ink3">
+          <span className="sr-only">reduced chi-square </span>
+          {printChiSquare(c.reducedChiSquare)}
+        </span>
+      </span>
+    </label>
+  );
+}
+
+/** "98 %", "under 1 %", "over 99 %" */
+export function printProbability(p: number): string {
+  if (p < 0.01) return 'under 1\u00a0%';
+  if (p > 0.99) return 'over 99\u00a0%';
+  return `${Math.round(100 * p)}\u00a0%`;
+}
+
+export function printChiSquare(value: number): string {
+  return value < 10 ? value.toFixed(2) : value.toPrecision(3).replace(/e\+?/, ' e');
+}
