@@ -1,5 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
-import { useEffect, useState } from 'react';
+import { useState } from 'react';
 import { Link, useParams } from 'react-router-dom';
 import { address } from '#src/lib/address.ts';
 import { useKeys } from '#src/lib/keys.ts';
@@ -65,9 +65,10 @@ function ExposurePage({ exposure, runs, lost, onRetry }: PageProps) {
   const [shownRun, setShownRun] = useState<string | null>(null);
   const run = runs.find((r) => r.id === shownRun) ?? runs[0];
   const answer = run?.outcome?.kind === 'answer' ? run.outcome : null;
-  const [chosen, setChosen] = useState(0);
+  const [choice, setChoice] = useState<{ run: string; index: number } | null>(null);
+  const chosen = choice && choice.run === run?.id ? choice.index : 0;
+  const setChosen = (index: number) => setChoice(run ? { run: run.id, index } : null);
   const [submitting, setSubmitting] = useState(false);
-  useEffect(() => setChosen(0), [run?.id]);
   const pixels = useQuery(pixelsQuery(exposure.id));
   const candidate = answer?.candidates[Math.min(chosen, answer.candidates.length - 1)];
   useKeys(

@@ -42,7 +42,7 @@ export function useSimulation(
       });
     };
     worker.current.postMessage(requestFor(exposure, candidate, id));
-  }, [exposure.id, exposure.width, exposure.height, exposure.bench, candidate]);
+  }, [exposure, candidate]);
   return candidate && answer ? answer : { plane: null, of: null };
 }
 
