@@ -27,6 +27,7 @@ import { RunAgain } from '#src/features/identifications/run-again.tsx';
 import { RunUnderWay } from '#src/features/identifications/run-under-way.tsx';
 import { getExposurePicture, type Exposure } from '#shared/contracts/exposures.ts';
 import type { Identification } from '#shared/contracts/identifications.ts';
+import { grouped } from '#shared/quantities.ts';
 
 export function Component() {
   const { exposureId = '' } = useParams();
@@ -198,6 +199,10 @@ function PutForwardButton({
   return <Button notYet="a shape that fits; take another exposure">Put forward for review</Button>;
 }
 
+/** Two figures, without an exponent where a plain number will do. */
+const short = (n: number) =>
+  n >= 1e-4 || n === 0 ? grouped(String(Number(n.toPrecision(2)))) : n.toExponential(0);
+
 /** What the answer rests on: exposure, bench copy, noise, hash, who and when. */
 function Conditions({ exposure, run }: { exposure: Exposure; run: Identification | undefined }) {
   const picture = run?.outcome?.picture ?? exposure.facts;
@@ -211,11 +216,11 @@ function Conditions({ exposure, run }: { exposure: Exposure; run: Identification
           {
             name: 'Noise, variance in counts',
             value: picture.noise
-              ? `${picture.noise.a.toPrecision(2)} + ${picture.noise.b.toPrecision(2)} I + ${picture.noise.c.toPrecision(1)} I\u00b2`
+              ? `${short(picture.noise.a)} + ${short(picture.noise.b)} I${picture.noise.c > 1e-8 ? ` + ${short(picture.noise.c)} I\u00b2` : ''}`
               : 'not known',
           },
           { name: 'Bench', value: `${exposure.bench.name}, version ${exposure.bench.version}` },
-          { name: 'Set-up', value: <BenchLine bench={exposure.bench} /> },
+          { name: 'Bench values', value: <BenchLine bench={exposure.bench} /> },
           { name: 'Taken in', value: `${exposure.uploadedBy.name}, ${printExactTime(exposure.uploadedAt)}` },
           ...(run ? [{ name: 'Engine, atlas', value: `${run.engineVersion}, ${run.atlasVersion}` }] : []),
         ]}

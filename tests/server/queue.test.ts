@@ -31,7 +31,7 @@ function job(
   run: (payload: { n: number }, context: JobContext) => Promise<void>,
   more: Partial<JobDefinition<never>> = {},
 ): JobDefinition<never> {
-  return { name, attempts: 3, concurrency: 1, run, ...more } as JobDefinition<never>;
+  return { name, attempts: 3, concurrency: 1, run, ...more };
 }
 
 const send = (queue: RunningQueue, name: string, n: number) =>

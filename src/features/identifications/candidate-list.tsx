@@ -5,6 +5,7 @@ import { ApertureSketch } from '#src/ui/aperture-sketch.tsx';
 import { CandidateSizes } from '#src/ui/candidate-words.tsx';
 import { classNames } from '#src/ui/class-names.ts';
 import { Measured } from '#src/ui/measured.tsx';
+import { printProbability } from '#src/ui/print-probability.ts';
 
 interface CandidateListProps {
   candidates: readonly Candidate[];
@@ -90,13 +91,6 @@ function CandidateRow({ candidate: c, rank, chosen, span, onChoose }: RowProps) 
   );
 }
 
-/** "98 %", "under 1 %", "over 99 %" */
-export function printProbability(p: number): string {
-  if (p < 0.01) return 'under 1\u00a0%';
-  if (p > 0.99) return 'over 99\u00a0%';
-  return `${Math.round(100 * p)}\u00a0%`;
-}
-
-export function printChiSquare(value: number): string {
+function printChiSquare(value: number): string {
   return value < 10 ? value.toFixed(2) : value.toPrecision(3).replace(/e\+?/, ' e');
 }

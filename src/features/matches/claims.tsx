@@ -3,6 +3,7 @@ import { familyOf } from '#shared/apertures/registry.ts';
 import type { Candidate, FarFieldFinding } from '#shared/contracts/identifications.ts';
 import { printQuantity } from '#shared/quantities.ts';
 import { Measured } from '#src/ui/measured.tsx';
+import { printProbability } from '#src/ui/print-probability.ts';
 
 interface ClaimsProps {
   candidate: Candidate;
@@ -66,8 +67,8 @@ export function Claims({ candidate, farField, runnerUp }: ClaimsProps) {
     },
     {
       name: 'Fit',
-      claim: `reduced chi-square ${candidate.reducedChiSquare.toPrecision(3)}, probability ${(100 * candidate.probability).toFixed(0)} %`,
-      next: runnerUp ? `probability ${(100 * runnerUp.probability).toPrecision(2)} %` : '',
+      claim: `reduced chi-square ${candidate.reducedChiSquare.toPrecision(3)}, probability ${printProbability(candidate.probability)}`,
+      next: runnerUp ? `probability ${printProbability(runnerUp.probability)}` : '',
     },
   ];
   return (

@@ -1,6 +1,7 @@
 import { readFile } from 'node:fs/promises';
 import { createRequire } from 'node:module';
 import { chromium, type Browser, type BrowserContext, type Page } from 'playwright-core';
+import type axeCore from 'axe-core';
 import { expect } from 'vitest';
 
 const flags = [
@@ -47,7 +48,7 @@ export async function expectAccessible(page: Page, what: string): Promise<void> 
   axeSource ??= await readFile(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
   await page.evaluate(axeSource);
   const violations = await page.evaluate(async () => {
-    const axe = (window as unknown as { axe: typeof import('axe-core') }).axe;
+    const axe = (window as unknown as { axe: typeof axeCore }).axe;
     const result = await axe.run(document, {
       runOnly: {
         type: 'tag',
