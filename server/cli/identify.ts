@@ -34,7 +34,7 @@ async function main(words: readonly string[]): Promise<number> {
 const workerFile = fileURLToPath(new URL('identify.worker.js', import.meta.url));
 
 async function identifyCases(command: Extract<Command, { kind: 'cases' }>): Promise<number> {
-  const pool = createWorkerPool(workerFile, command.threads);
+  const pool = createWorkerPool(workerFile, { threads: command.threads });
   try {
     const { answered, failed } = await runCases(
       pool,
@@ -58,7 +58,7 @@ async function identifyCases(command: Extract<Command, { kind: 'cases' }>): Prom
 }
 
 async function identifyPicture(command: Extract<Command, { kind: 'picture' }>): Promise<number> {
-  const pool = createWorkerPool(workerFile, 1);
+  const pool = createWorkerPool(workerFile, { threads: 1 });
   const begun = performance.now();
   const tell = (step: string, share: number) => {
     if (process.stderr.isTTY)

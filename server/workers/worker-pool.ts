@@ -13,13 +13,20 @@ const timeLimit = 5 * 60_000;
 /** As many as there are cores, within reason. */
 export const identificationsAtOnce = Math.max(1, Math.min(4, availableParallelism()));
 
+interface PoolOptions {
+  /** Threads at most; otherwise one beside those that identify, so that uploads find a thread of their own. */
+  readonly threads?: number;
+  /** Milliseconds for one task. */
+  readonly limit?: number;
+}
+
 /** The engine in worker threads. `file` is the bundled worker. */
-export function createWorkerPool(file: string, limit = timeLimit): EnginePool {
+export function createWorkerPool(file: string, options: PoolOptions = {}): EnginePool {
+  const { threads = identificationsAtOnce + 1, limit = timeLimit } = options;
   const pool = new Piscina({
     filename: file,
     minThreads: 1,
-    // Uploads find a thread of their own beside the identifications that run.
-    maxThreads: identificationsAtOnce + 1,
+    maxThreads: threads,
     idleTimeout: 60_000,
     resourceLimits: { maxOldGenerationSizeMb: 1500 },
   });

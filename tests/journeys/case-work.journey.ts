@@ -88,7 +88,7 @@ describe('the work on a case', () => {
     await page.waitForURL(/\/cases\/[0-9a-f-]{36}$/);
     await page
       .getByLabel('Bench that the exposures are taken on')
-      .selectOption({ label: 'Bench 2, 200 mm lens' });
+      .selectOption({ label: 'Bench 2, 100 mm lens' });
     await page.getByText('never look into the beam', { exact: false }).first().waitFor();
     await page
       .getByLabel('Pictures of the pattern')

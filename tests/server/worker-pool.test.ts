@@ -73,7 +73,7 @@ describe('the engine in worker threads', () => {
   });
 
   it('ends a run that takes too long with a sentence', async () => {
-    const hasty = createWorkerPool(worker, 1);
+    const hasty = createWorkerPool(worker, { limit: 1 });
     await expect(hasty.identify(bytes, benchDraft, ignore, never)).rejects.toMatchObject({
       code: 'identification-crashed',
       message: expect.stringMatching(/Crop the picture/),

@@ -72,33 +72,35 @@ export function Claims({ candidate, farField, runnerUp }: ClaimsProps) {
     },
   ];
   return (
-    <table className="w-full border-collapse text-left">
-      <caption className="sr-only">Claims of the match beside the runner-up</caption>
-      <thead>
-        <tr className="label text-ink3">
-          <th scope="col" className="pb-1.5">
-            Claim
-          </th>
-          <th scope="col" className="pb-1.5">
-            This match, U with k = 2
-          </th>
-          <th scope="col" className="pb-1.5">
-            Runner-up
-          </th>
-        </tr>
-      </thead>
-      <tbody>
-        {rows.map((row) => (
-          <tr key={row.name} className="border-t border-rule">
-            <th scope="row" className="py-2.5 pr-4 align-top font-[500] text-ink2">
-              {row.name}
+    <div tabIndex={0} role="region" aria-label="Claims beside the runner-up" className="overflow-x-auto">
+      <table className="w-full border-collapse text-left">
+        <caption className="sr-only">Claims of the match beside the runner-up</caption>
+        <thead>
+          <tr className="label text-ink3">
+            <th scope="col" className="pb-1.5">
+              Claim
             </th>
-            <td className="reading py-2.5 pr-4 align-top">{row.claim}</td>
-            <td className="py-2.5 align-top text-ink2">{row.next}</td>
+            <th scope="col" className="pb-1.5">
+              This match, U with k = 2
+            </th>
+            <th scope="col" className="pb-1.5">
+              Runner-up
+            </th>
           </tr>
-        ))}
-      </tbody>
-    </table>
+        </thead>
+        <tbody>
+          {rows.map((row) => (
+            <tr key={row.name} className="border-t border-rule">
+              <th scope="row" className="py-2.5 pr-4 align-top font-[500] text-ink2">
+                {row.name}
+              </th>
+              <td className="reading py-2.5 pr-4 align-top">{row.claim}</td>
+              <td className="py-2.5 align-top text-ink2">{row.next}</td>
+            </tr>
+          ))}
+        </tbody>
+      </table>
+    </div>
   );
 }
 

@@ -86,7 +86,7 @@ export const screens: readonly ScreenUnderTest[] = [
     shows: 'Profile across the axis',
   },
   { name: 'library', person: 'Sela Ondrey', path: at('/library'), shows: 'PH-001' },
-  { name: 'benches', person: 'Tamsin Orrel', path: at('/benches'), shows: 'Bench 2, 200 mm lens' },
+  { name: 'benches', person: 'Tamsin Orrel', path: at('/benches'), shows: 'Bench 2, 100 mm lens' },
   { name: 'new-bench', person: 'Tamsin Orrel', path: at('/benches/new'), shows: 'Pixel pitch' },
   {
     name: 'edit-bench',
