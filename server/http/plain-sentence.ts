@@ -25,7 +25,12 @@ export function plainSentence(issue: z.core.$ZodRawIssue): string | undefined {
       return `This must be at least ${issue.minimum}${issue.origin === 'string' ? ' characters' : ''}.`;
     case 'invalid_format':
       return issue.format === 'uuid' ? 'This is not an id.' : 'This is not of the right form.';
-    default:
+    case 'custom':
+    case 'invalid_element':
+    case 'invalid_key':
+    case 'invalid_union':
+    case 'not_multiple_of':
+    case 'unrecognized_keys':
       return undefined;
   }
 }

@@ -9,10 +9,6 @@ import {
   versionSchema,
 } from '#shared/contracts/paging.ts';
 
-/** A value in SI units with its standard uncertainty. */
-export const measuredSchema = z.object({ value: z.number(), u: z.number() });
-export type MeasuredValue = z.infer<typeof measuredSchema>;
-
 const measured = (what: string, min: number, max: number, range: string) =>
   z
     .object({

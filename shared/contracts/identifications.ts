@@ -5,7 +5,6 @@ import { personRefSchema } from '#shared/contracts/people.ts';
 import { problemSchema } from '#shared/problems.ts';
 
 export const verdictSchema = z.enum(['identified', 'ambiguous', 'unidentified']);
-export type Verdict = z.infer<typeof verdictSchema>;
 
 export const candidateSchema = z.object({
   family: z.string(),

@@ -4,7 +4,6 @@ import { endpoint } from '#shared/contracts/endpoint.ts';
 import { idParam, requiredLineSchema, timestampSchema, versionSchema } from '#shared/contracts/paging.ts';
 
 export const personRefSchema = z.object({ id: z.uuid(), name: z.string() });
-export type PersonRef = z.infer<typeof personRefSchema>;
 
 export const emailSchema = z
   .email('Enter an e-mail address such as name@example.org.')
