@@ -34,13 +34,16 @@ export function Component() {
   );
 }
 
+/** A title may be a question. */
+const sentenceOf = (title: string) => (/[.?!]$/.test(title) ? title : `${title}.`);
+
 function CasePage({ stored, lost, onRetry }: { stored: Case; lost: unknown; onRetry: () => void }) {
   const benches = useQuery({ ...benchesQuery, enabled: stored.can.upload });
   const exposures = [...stored.exposures].sort((a, b) => b.number - a.number);
   return (
     <>
       <Sentence
-        below={`${stored.title}. ${placeOf(stored)}.`}
+        below={`${sentenceOf(stored.title)} ${placeOf(stored)}.`}
         deeds={
           <>
             {stored.can.edit ? <ButtonLink to={`/cases/${stored.id}/edit`}>Edit the case</ButtonLink> : null}

@@ -75,12 +75,13 @@ describe('the ranked candidates', () => {
     );
   }
 
-  it('are chosen by the arrow keys and never printed as certain or impossible', async () => {
+  it('are chosen one at a time and never printed as certain or impossible', async () => {
     renderScreen(<Chosen />);
     const [first, second] = screen.getAllByRole<HTMLInputElement>('radio');
-    first.focus();
-    await userEvent.keyboard('{ArrowDown}');
+    expect(first.checked).toBe(true);
+    await userEvent.click(second);
     expect(second.checked).toBe(true);
+    expect(first.checked).toBe(false);
     expect(screen.getByText('over 99\u00a0%')).toBeTruthy();
     expect(screen.getByText('under 1\u00a0%')).toBeTruthy();
   });

@@ -96,7 +96,7 @@ describe('the work on a case', () => {
         ...threePictures(),
         { name: 'notes.png', mimeType: 'image/png', buffer: Buffer.from('these are notes, not a picture') },
       ]);
-    await page.getByText('The file is not a PNG, TIFF, JPEG or BMP picture', { exact: false }).waitFor();
+    await page.getByText('The file is a text file, which cannot be measured', { exact: false }).waitFor();
     for (const n of [1, 2, 3]) await page.getByRole('link', { name: `Exposure ${n}`, exact: true }).waitFor();
     await page.getByText('8 bit, PNG').waitFor();
     expect(await page.getByText(/12 bit, (PNG|TIFF)/).count()).toBe(2);

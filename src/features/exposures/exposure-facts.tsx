@@ -26,7 +26,7 @@ export function ExposureFacts({ exposure: e }: { exposure: Exposure }) {
           name: 'Centre found',
           value: center ? `${center.x.toFixed(1)}, ${center.y.toFixed(1)} px` : 'not found',
         },
-        ...(far && far.fresnelNumber !== null
+        ...(far && far.fresnelNumber !== null && e.bench.geometry !== 'lens'
           ? [
               {
                 name: 'Fresnel number, drawing',

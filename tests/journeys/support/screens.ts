@@ -103,7 +103,7 @@ export const screens: readonly ScreenUnderTest[] = [
     shows: 'May sign in',
   },
   { name: 'mail', person: 'Perrin Askvold', path: at('/mail'), shows: /joao\.verrin|tamsin\.orrel/ },
-  { name: 'audit', person: 'Perrin Askvold', path: at('/audit'), shows: 'confirm-match' },
+  { name: 'audit', person: 'Perrin Askvold', path: at('/audit'), shows: 'confirm match' },
   { name: 'password', person: 'Tamsin Orrel', path: at('/password'), shows: /present password/i },
   { name: 'not-found', person: 'Tamsin Orrel', path: at('/nowhere'), shows: /work list/i },
 ];
