@@ -24,7 +24,9 @@ export function CandidateList({ candidates, chosen, onChoose, claimed }: Candida
         <span className="text-[13px] font-[750]">
           {claimed ? 'Candidates' : 'Nearest shapes, not claimed'}
         </span>
-        <span className="label ml-4 text-ink3">probability, reduced chi-square</span>
+        <span className="label ml-4 text-ink3">
+          {claimed ? 'probability, reduced chi-square' : 'probability'}
+        </span>
       </legend>
       {candidates.map((candidate, i) => (
         <CandidateRow
@@ -33,6 +35,7 @@ export function CandidateList({ candidates, chosen, onChoose, claimed }: Candida
           rank={i + 1}
           chosen={i === chosen}
           span={span}
+          claimed={claimed}
           onChoose={() => onChoose(i)}
         />
       ))}
@@ -45,10 +48,12 @@ interface RowProps {
   rank: number;
   chosen: boolean;
   span: number;
+  /** The chi-square of a shape that is not claimed rests on a noise law fitted to its own misfit, so it is not shown. */
+  claimed: boolean;
   onChoose: () => void;
 }
 
-function CandidateRow({ candidate: c, rank, chosen, span, onChoose }: RowProps) {
+function CandidateRow({ candidate: c, rank, chosen, span, claimed, onChoose }: RowProps) {
   const family = familyOf(c.family);
   return (
     <label
@@ -82,10 +87,12 @@ function CandidateRow({ candidate: c, rank, chosen, span, onChoose }: RowProps) 
       </span>
       <span className="shrink-0 text-right">
         <span className="block font-[720]">{printProbability(c.probability)}</span>
-        <span className="label block text-ink3">
-          <span className="sr-only">reduced chi-square </span>
-          {printChiSquare(c.reducedChiSquare)}
-        </span>
+        {claimed ? (
+          <span className="label block text-ink3">
+            <span className="sr-only">reduced chi-square </span>
+            {printChiSquare(c.reducedChiSquare)}
+          </span>
+        ) : null}
       </span>
     </label>
   );

@@ -64,8 +64,8 @@ export function ReviewTable({ matches }: { matches: readonly Match[] }) {
           head: 'Put forward',
           cell: (m) => (
             <>
-              {m.submittedBy.name}
-              <span className="block text-ink2">{printTime(m.submittedAt)}</span>
+              <span className="block whitespace-nowrap">{m.submittedBy.name}</span>
+              <span className="block whitespace-nowrap text-ink2">{printTime(m.submittedAt)}</span>
             </>
           ),
         },
