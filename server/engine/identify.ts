@@ -167,7 +167,8 @@ function answer({ ranking, judgement }: Examined, setup: Setup): Outcome {
         ...best.fit.center,
         u: centerUncertainty(ranking, judgement.ranked[0].finalist),
       }),
-      noise: frame.noise,
+      // The refined law rests on a fit; without a shape that fits only the plain one means anything.
+      noise: judgement.verdict === 'unidentified' ? ranking.plainNoise : frame.noise,
     },
   };
 }
