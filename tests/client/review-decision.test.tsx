@@ -82,7 +82,7 @@ describe('the ranked candidates', () => {
     await userEvent.click(second);
     expect(second.checked).toBe(true);
     expect(first.checked).toBe(false);
-    expect(screen.getByText('over 99\u00a0%')).toBeTruthy();
-    expect(screen.getByText('under 1\u00a0%')).toBeTruthy();
+    expect(screen.getByText(/over 99\s%/)).toBeTruthy();
+    expect(screen.getByText(/under 1\s%/)).toBeTruthy();
   });
 });
